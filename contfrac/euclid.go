@@ -1,0 +1,48 @@
+package contfrac
+
+import (
+	"fmt"
+	"math/big"
+)
+
+// FromRat returns the regular continued fraction of r, with the last term at
+// least 2 unless it is the only one. A nil r counts as 0.
+func FromRat(r *big.Rat) Fraction {
+	if r == nil {
+		r = new(big.Rat)
+	}
+	return euclid(r.Num(), r.Denom())
+}
+
+// FromRatio returns the regular continued fraction of p/q, which need not be
+// in lowest terms, with the last term at least 2 unless it is the only one;
+// that of p/0 is the empty fraction for p ≠ 0. 0/0 gives ErrInfinite; nil
+// counts as 0. It saves the greatest common divisor that making a big.Rat costs.
+func FromRatio(p, q *big.Int) (Fraction, error) {
+	if p == nil {
+		p = new(big.Int)
+	}
+	if q == nil {
+		q = new(big.Int)
+	}
+	if q.Sign() == 0 && p.Sign() == 0 {
+		return Fraction{}, fmt.Errorf("contfrac: fraction of 0/0: numerator and denominator not both 0 are accepted: %w", ErrInfinite)
+	}
+	if q.Sign() < 0 {
+		p, q = new(big.Int).Neg(p), new(big.Int).Neg(q)
+	}
+	return euclid(p, q), nil
+}
+
+// euclid returns the quotients of the Euclidean algorithm on p and q ≥ 0.
+func euclid(p, q *big.Int) Fraction {
+	var b termBuilder
+	x, y := new(big.Int).Set(p), new(big.Int).Set(q)
+	for y.Sign() != 0 {
+		t, r := new(big.Int), new(big.Int)
+		t.DivMod(x, y, r)
+		b.push(t)
+		x, y = y, r
+	}
+	return b.fraction()
+}
