@@ -1,0 +1,174 @@
+package orbifold
+
+import (
+	"fmt"
+	"math/big"
+	"math/bits"
+
+	"example.com/onecusp/contfrac"
+	"example.com/onecusp/farey"
+)
+
+// ring is the arithmetic that the exchange rule needs. The rule is the same
+// over the integers, modulo m and modulo a machine word; only the ring differs.
+// Elements are never changed in place.
+type ring[T any] interface {
+	from(x *big.Int) T
+	add(x, y T) T
+	sub(x, y T) T
+	mul(x, y T) T
+	isZero(x T) bool
+}
+
+// vertex is an arc of a triangle: its number and its class.
+type vertex[T any] struct {
+	number T
+	class  farey.Class
+}
+
+// rule is the exchange rule (X) of a family over a ring.
+type rule[T any] struct {
+	ring[T]
+	k      T    // K
+	weight [3]T // by class
+}
+
+func newRule[T any](f Family, r ring[T]) rule[T] {
+	x := rule[T]{ring: r, k: r.from(f.K())}
+	for _, c := range classes {
+		x.weight[c] = r.from(big.NewInt(f.weights[c]))
+	}
+	return x
+}
+
+// base returns the base triangle, number 1 at each vertex.
+func (x rule[T]) base() (b [3]vertex[T]) {
+	for _, c := range classes {
+		b[c] = vertex[T]{x.from(big.NewInt(1)), c}
+	}
+	return b
+}
+
+// trace returns t = K·N − k for the arc v.
+func (x rule[T]) trace(v vertex[T]) T {
+	return x.sub(x.mul(x.k, v.number), x.weight[v.class])
+}
+
+// flip returns the arc that replaces c in the triangle a, b, c, by the second
+// form of (X): c' = K·a·b − k_a·b − k_b·a − c, wherein K·a − k_a is the trace
+// at a.
+func (x rule[T]) flip(a, b, c vertex[T]) vertex[T] {
+	n := x.mul(x.trace(a), b.number)
+	if w := x.weight[b.class]; !x.isZero(w) {
+		n = x.sub(n, x.mul(w, a.number))
+	}
+	return vertex[T]{x.sub(n, c.number), c.class}
+}
+
+// integers is the ring Z.
+type integers struct{}
+
+func (integers) from(x *big.Int) *big.Int   { return x }
+func (integers) add(x, y *big.Int) *big.Int { return new(big.Int).Add(x, y) }
+func (integers) sub(x, y *big.Int) *big.Int { return new(big.Int).Sub(x, y) }
+func (integers) mul(x, y *big.Int) *big.Int { return contfrac.Product(x, y) }
+func (integers) isZero(x *big.Int) bool     { return x.Sign() == 0 }
+
+// residues is the ring Z/m, with representatives 0 … m−1.
+type residues struct{ m *big.Int }
+
+func (r residues) from(x *big.Int) *big.Int { return new(big.Int).Mod(x, r.m) }
+
+func (r residues) add(x, y *big.Int) *big.Int {
+	z := new(big.Int).Add(x, y)
+	if z.Cmp(r.m) >= 0 {
+		z.Sub(z, r.m)
+	}
+	return z
+}
+
+func (r residues) sub(x, y *big.Int) *big.Int {
+	z := new(big.Int).Sub(x, y)
+	if z.Sign() < 0 {
+		z.Add(z, r.m)
+	}
+	return z
+}
+
+func (r residues) mul(x, y *big.Int) *big.Int {
+	z := contfrac.Product(x, y)
+	if z.Cmp(r.m) >= 0 {
+		z.Rem(z, r.m)
+	}
+	return z
+}
+
+func (residues) isZero(x *big.Int) bool { return x.Sign() == 0 }
+
+// wordResidues is the ring Z/m for a modulus that fits a machine word.
+type wordResidues struct{ m uint64 }
+
+func (r wordResidues) from(x *big.Int) uint64 {
+	return new(big.Int).Mod(x, new(big.Int).SetUint64(r.m)).Uint64()
+}
+
+func (r wordResidues) add(x, y uint64) uint64 {
+	z, carry := bits.Add64(x, y, 0)
+	if carry != 0 || z >= r.m {
+		z -= r.m
+	}
+	return z
+}
+
+func (r wordResidues) sub(x, y uint64) uint64 {
+	z, borrow := bits.Sub64(x, y, 0)
+	if borrow != 0 {
+		z += r.m
+	}
+	return z
+}
+
+func (r wordResidues) mul(x, y uint64) uint64 {
+	hi, lo := bits.Mul64(x, y)
+	_, rem := bits.Div64(hi, lo, r.m) // hi < m, since both factors are < m
+	return rem
+}
+
+func (wordResidues) isZero(x uint64) bool { return x == 0 }
+
+// Solves returns nil when x, y, z at the classes of 0/1, 1/0 and 1/1 solve
+//
+//	x² + y² + z² + k₀·yz + k∞·zx + k₁·xy = K·xyz                  (E)
+//
+// in positive integers. Else the error is ErrNotPositive or ErrNotSolution and
+// states both sides. Cost: a few multiplications. Source: "Generalization of
+// Markov Diophantine equation via generalized cluster algebra", Electron. J.
+// Combin. 30 (2023).
+func (f Family) Solves(x, y, z *big.Int) error {
+	n := [3]*big.Int{x, y, z}
+	for i, v := range n {
+		if v == nil || v.Sign() <= 0 {
+			return fmt.Errorf("orbifold: number %s at class %v: %w", brief(v), classes[i], ErrNotPositive)
+		}
+	}
+	if left, right := f.sides(n); left.Cmp(right) != 0 {
+		return fmt.Errorf("orbifold: (%s, %s, %s) in family %v: left side of (E) is %s, right side %s: %w",
+			brief(x), brief(y), brief(z), f, brief(left), brief(right), ErrNotSolution)
+	}
+	return nil
+}
+
+// sides returns the two sides of (E).
+func (f Family) sides(n [3]*big.Int) (left, right *big.Int) {
+	left = new(big.Int)
+	for _, c := range classes {
+		v, w := n[(c+1)%3], n[(c+2)%3]
+		left.Add(left, contfrac.Product(n[c], n[c]))
+		if k := f.weights[c]; k != 0 {
+			vw := contfrac.Product(v, w)
+			left.Add(left, vw.Mul(vw, big.NewInt(k)))
+		}
+	}
+	right = contfrac.Product(contfrac.Product(n[0], n[1]), n[2])
+	return left, right.Mul(right, f.K())
+}
