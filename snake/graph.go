@@ -30,8 +30,8 @@ const (
 )
 
 // layoutNow is the number of tiles up to which a word is laid out at once
-// instead of at every use.
-const layoutNow = 1 << 12
+// instead of at every use. Tests force it to its minimum, 0.
+var layoutNow = 1 << 12
 
 // FromWord returns the snake graph of a word without end letters: n−1 letters
 // give n tiles. The shape follows the rule in the package documentation.
@@ -88,10 +88,10 @@ func EdgeWithLabel(l Label) Graph { return Graph{edge: l} }
 
 // Tiles returns the number of tiles, or [math.MaxInt] when it is larger.
 func (g Graph) Tiles() int {
-	switch g.form {
-	case singleEdge:
+	switch {
+	case g.form == singleEdge:
 		return 0
-	case glued:
+	case g.s != nil:
 		return g.s.n
 	}
 	n := g.run.Len()

@@ -1,0 +1,40 @@
+package snake
+
+import (
+	"fmt"
+	"iter"
+)
+
+// Hexagon is a pair of tiles that come from one crossing of a loop of weight
+// 1: the crossing's own letter glued them ([Builder.GlueOwn]), and there is
+// exactly one such letter. They can be drawn as one hexagon; its chord, the
+// glue edge of the two, stays an edge of the graph: without it the number of matchings changes.
+type Hexagon struct {
+	First int   // index of its first tile; the second is the next one
+	Chord Side  // the edge inside
+	Label Label // label of the crossed loop
+}
+
+// Hexagons yields the hexagons of the graph in order. Graphs made from a word
+// have none, since a word does not say which letters belong to one crossing.
+// It can be run again.
+func (g Graph) Hexagons() iter.Seq[Hexagon] {
+	return func(yield func(Hexagon) bool) {
+		l := g.labels()
+		if l == nil {
+			return
+		}
+		own := func(i int) bool { return i >= 1 && i < g.s.n && l.own[i-1] }
+		for i := 1; i < g.s.n; i++ {
+			if !own(i) || own(i-1) || own(i+1) {
+				continue
+			}
+			if !yield(Hexagon{i, g.s.side(i, g.s.dir[i].exit()), l.diagonal[i-1]}) {
+				return
+			}
+		}
+	}
+}
+
+// String returns a form such as "tiles 3 and 4".
+func (h Hexagon) String() string { return fmt.Sprintf("tiles %d and %d", h.First, h.First+1) }

@@ -1,0 +1,167 @@
+package snake
+
+import (
+	"fmt"
+	"html"
+	"math"
+	"strings"
+)
+
+// The look of the pictures. Tints and inks go by label; neighbours in these lists
+// differ in hue (safe for the common colour blindnesses) and in lightness (so they stay
+// apart in grey print), and every ink has its own dash pattern besides.
+var (
+	tints = []string{"#ffffff", "#f7e3b5", "#b9d4e6", "#dcdfe3", "#f2c9ae", "#cfe3c8"}
+	inks  = []string{"#7b8794", "#a86b00", "#13507d", "#4a5568", "#b3401f", "#2f6b3a"}
+	dashs = []string{"2 4", "7 4", "1.5 3.5", "9 3 2 3", "4 2", "2 2 6 2"}
+)
+
+const (
+	svgUnit   = 64.0 // pixels a tile side
+	svgMargin = 22.0
+	paper     = "#fffdf8"
+	outline   = "#8a94a0"
+	heavy     = "#101f33"
+	hatch     = "#24405c"
+)
+
+// byLabel picks the entry of a list for a label; the first is for NoLabel, the others are repeated.
+func byLabel(list []string, l Label) string {
+	if l == NoLabel {
+		return list[0]
+	}
+	return list[1+(int(l)-1)%(len(list)-1)]
+}
+
+// SVG draws the graph as a self-contained SVG image: tiles tinted by the label of
+// their diagonal, diagonals dashed in a pattern of the label, and what the Drawing asks for.
+//
+// It returns [ErrTooLong] past [MaxDrawnTiles] tiles and [ErrNotMatching] for a
+// matching of another graph.
+func (g Graph) SVG(d Drawing) (string, error) {
+	p, err := g.picture(d)
+	if err != nil {
+		return "", err
+	}
+	low, high := p.bounds()
+	c := canvas{unit: svgUnit, left: svgMargin - low.x*svgUnit, top: svgMargin + high.y*svgUnit}
+	c.draw(p)
+	return c.document((high.x-low.x)*svgUnit+2*svgMargin, (high.y-low.y)*svgUnit+2*svgMargin, g.describe("%v")), nil
+}
+
+// bounds are the lower left and upper right corner of everything drawn.
+func (p *picture) bounds() (low, high spot) {
+	high = spot{float64(p.max.X), float64(p.max.Y)}
+	for _, s := range p.moved {
+		low = spot{math.Min(low.x, s.x), math.Min(low.y, s.y)}
+		high = spot{math.Max(high.x, s.x), math.Max(high.y, s.y)}
+	}
+	return low, high
+}
+
+// canvas collects SVG elements; lattice points are mapped with y upwards.
+type canvas struct {
+	strings.Builder
+	unit, left, top float64
+}
+
+func (c *canvas) x(s spot) string { return decimal(c.left + s.x*c.unit) }
+func (c *canvas) y(s spot) string { return decimal(c.top - s.y*c.unit) }
+
+// decimal writes a coordinate with at most two decimals and no needless zeros.
+func decimal(v float64) string {
+	s := strings.TrimRight(fmt.Sprintf("%.2f", v), "0")
+	return strings.TrimSuffix(s, ".")
+}
+
+func (c *canvas) add(format string, a ...any) { fmt.Fprintf(c, format+"\n", a...) }
+
+// line draws a line between two spots with the given attributes.
+func (c *canvas) line(a, b spot, attributes string) {
+	c.add(`<line x1="%s" y1="%s" x2="%s" y2="%s" %s/>`, c.x(a), c.y(a), c.x(b), c.y(b), attributes)
+}
+
+// polygon draws a closed outline.
+func (c *canvas) polygon(s []spot, attributes string) {
+	points := make([]string, len(s))
+	for i, a := range s {
+		points[i] = c.x(a) + "," + c.y(a)
+	}
+	c.add(`<polygon points="%s" %s/>`, strings.Join(points, " "), attributes)
+}
+
+// text writes a text centred at a spot, with a halo of the given colour.
+func (c *canvas) text(s spot, size float64, ink, halo, text string) {
+	c.add(`<text x="%s" y="%s" dy=".35em" font-size="%s" fill="%s" stroke="%s" stroke-width="%s" paint-order="stroke" stroke-linejoin="round" text-anchor="middle">%s</text>`,
+		c.x(s), c.y(s), decimal(size), ink, halo, decimal(size/4), html.EscapeString(text))
+}
+
+// document wraps what was drawn.
+func (c *canvas) document(width, height float64, title string) string {
+	return fmt.Sprintf(`<svg xmlns="http://www.w3.org/2000/svg" width="%s" height="%s" viewBox="0 0 %s %s" role="img" font-family="'DejaVu Sans', Verdana, sans-serif">
+<title>%s</title>
+<defs><pattern id="flip" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)"><line x1="0" y1="0" x2="0" y2="7" stroke="%s" stroke-width="1.6" stroke-opacity=".38"/></pattern></defs>
+<rect width="100%%" height="100%%" fill="%s"/>
+%s</svg>
+`, decimal(width), decimal(height), decimal(width), decimal(height), html.EscapeString(title), hatch, paper, c.String())
+}
+
+// draw draws a laid out graph: tiles, hatching, diagonals, edges, vertices and texts, in this order.
+func (c *canvas) draw(p *picture) {
+	u := c.unit
+	for i := 1; i <= len(p.tiles); i++ {
+		t := p.tiles[i-1]
+		c.polygon(p.outline(i), fmt.Sprintf(`fill="%s"`, byLabel(tints, t.Diagonal)))
+		if p.pair[i] {
+			i++
+		}
+	}
+	if p.Matching != nil {
+		for _, t := range p.tiles {
+			if p.Matching.Flipped(t.Index) {
+				k := t.Corners()
+				c.polygon([]spot{p.at(k[0]), p.at(k[1]), p.at(k[2]), p.at(k[3])}, `fill="url(#flip)"`)
+			}
+		}
+	}
+	for _, t := range p.tiles {
+		k := t.Corners()
+		c.line(p.at(k[3]), p.at(k[1]), fmt.Sprintf(`stroke="%s" stroke-width="%s" stroke-dasharray="%s"`,
+			byLabel(inks, t.Diagonal), decimal(u/50), byLabel(dashs, t.Diagonal)))
+	}
+	for _, e := range p.edges {
+		if !e.matched {
+			c.line(p.at(e.from), p.at(e.to), fmt.Sprintf(`stroke="%s" stroke-width="%s"`, outline, decimal(u/38)))
+		}
+	}
+	for _, e := range p.edges {
+		if e.matched {
+			c.line(p.at(e.from), p.at(e.to), fmt.Sprintf(`stroke="%s" stroke-width="%s" stroke-linecap="round"`, heavy, decimal(u/9)))
+		}
+	}
+	for _, v := range p.vertices() {
+		s := p.at(v)
+		c.add(`<circle cx="%s" cy="%s" r="%s" fill="%s"/>`, c.x(s), c.y(s), decimal(u/18), heavy)
+	}
+	for i := 1; i <= len(p.tiles); i++ {
+		t := p.tiles[i-1]
+		corners := p.outline(i)
+		at := middle(corners)
+		if p.pair[i] && !p.Numbers { // one text for both tiles, beside the chord
+			at = middle([]spot{at, middle(p.outline(i + 1))})
+		}
+		if s := p.inside(t); s != "" {
+			c.text(at, u*.27, heavy, byLabel(tints, t.Diagonal), s)
+		}
+		if p.pair[i] && !p.Numbers {
+			i++
+		}
+	}
+	if p.EdgeNames && p.Name != nil {
+		for _, e := range p.edges {
+			if e.Label != NoLabel {
+				c.text(middle([]spot{p.at(e.from), p.at(e.to)}), u*.19, byLabel(inks, e.Label), paper, p.Name(e.Label))
+			}
+		}
+	}
+}

@@ -1,0 +1,111 @@
+package snake
+
+import (
+	"fmt"
+	"math/big"
+	"strings"
+	"unicode/utf8"
+
+	"example.com/onecusp/contfrac"
+)
+
+// String describes the graph in one line, with the whole word by runs: "snake
+// graph, 4 tiles: R L2". The verb %v shortens long words. [Graph.Text] draws.
+func (g Graph) String() string { return g.describe("%s") }
+
+// Format implements fmt.Formatter: %s writes what String returns, %q quotes it, %v and
+// every other verb shorten a long word.
+func (g Graph) Format(f fmt.State, verb rune) {
+	switch verb {
+	case 's':
+		fmt.Fprint(f, g.String())
+	case 'q':
+		fmt.Fprintf(f, "%q", g.String())
+	default:
+		fmt.Fprint(f, g.describe("%v"))
+	}
+}
+
+func (g Graph) describe(verb string) string {
+	w, ok := g.Word()
+	if !ok {
+		return "snake graph, single edge"
+	}
+	return "snake graph, " + describeTiles(w, verb)
+}
+
+// describeTiles names the number of tiles that an open word gives, and the word.
+func describeTiles(w contfrac.Word, verb string) string {
+	if w.IsEmpty() {
+		return "1 tile"
+	}
+	n := w.Len()
+	n.Add(n, big.NewInt(1))
+	if verb == "%v" {
+		return fmt.Sprintf("%s tiles: %v", contfrac.Abbreviate(n), w)
+	}
+	return fmt.Sprintf("%s tiles: %s", n, w.Compact())
+}
+
+// Text draws the graph with box characters, one row of tiles to two lines,
+// matched edges heavy and flipped tiles shaded at their corners. Of names, three characters fit into a tile.
+// It returns [ErrTooLong] past [MaxDrawnTiles] tiles and [ErrNotMatching] for a
+// matching of another graph.
+func (g Graph) Text(d Drawing) (string, error) {
+	p, err := g.picture(d)
+	if err != nil {
+		return "", err
+	}
+	const wide, high = 4, 2 // characters from vertex to vertex
+	rows := make([][]rune, p.max.Y*high+1)
+	for i := range rows {
+		rows[i] = []rune(strings.Repeat(" ", p.max.X*wide+1))
+	}
+	put := func(x, y int, r rune) { rows[len(rows)-1-y][x] = r }
+	for _, e := range p.edges {
+		x, y := e.from.X*wide, e.from.Y*high
+		if e.from.Y == e.to.Y {
+			for k := 1; k < wide; k++ {
+				put(x+k, y, pick(e.matched, '━', '─'))
+			}
+		} else {
+			put(x, y+1, pick(e.matched, '┃', '│'))
+		}
+	}
+	for _, v := range p.vertices() {
+		put(v.X*wide, v.Y*high, '●')
+	}
+	for _, t := range p.tiles {
+		x, y := t.At.X*wide+1, t.At.Y*high+1
+		if p.Matching != nil && p.Matching.Flipped(t.Index) {
+			put(x, y, '░')
+			put(x+2, y, '░')
+		}
+		text := []rune(p.inside(t))
+		if len(text) > wide-1 {
+			text = text[:wide-1]
+		}
+		if len(text) == 1 {
+			x++
+		}
+		for k, r := range text {
+			if r == utf8.RuneError || r < ' ' {
+				r = '?'
+			}
+			put(x+k, y, r)
+		}
+	}
+	var b strings.Builder
+	for _, row := range rows {
+		b.WriteString(strings.TrimRight(string(row), " "))
+		b.WriteByte('\n')
+	}
+	return b.String(), nil
+}
+
+func pick[T any](first bool, a, b T) T {
+	if first {
+		return a
+	}
+	return b
+}
