@@ -23,23 +23,23 @@ type Crossing struct {
 	Turn Side
 }
 
-// maxCorridor bounds |p| and q in a corridor: the vertices met have coordinates of at
-// most that size, so every sum of two stays in an int64 up to a wrap that is undone.
-const maxCorridor = 1 << 62
+// MaxCorridorTerm is the greatest |p| and q of a slope that [Slope.Crossings] follows.
+// The points met have coordinates of at most that size, and offsets of at most twice
+// it, so everything stays within an int64.
+const MaxCorridorTerm int64 = 1<<62 - 1
 
 // Crossings returns the edges crossed by the arc from (0, 0) to (q, p), in order: the
 // corridor of the slope. There are |p| − 1 horizontal, q − 1 vertical and |q − p| − 1
-// diagonal ones, an odd total; the base slopes cross nothing. Turning the arc round
-// reverses the order and keeps all sides, except that the turn belongs to the
-// crossing before it.
+// diagonal ones, an odd total; the base slopes cross nothing. The half turn about the
+// middle of the arc takes crossing i of n to crossing n+1−i, and left to right.
 //
 // The iterator can be used again and stopped anywhere; it needs constant memory and a
 // few additions for each crossing, no division. It fails with [ErrTooLarge] if |p| or
-// q is 2⁶² or more.
+// q is past [MaxCorridorTerm].
 func (s Slope) Crossings() (iter.Seq[Crossing], error) {
 	p, q, ok := s.Int64s()
-	if !ok || abs(p) >= maxCorridor || q >= maxCorridor {
-		return nil, fmt.Errorf("farey: crossings of the arc of slope %v: terms below 2^62 would be accepted: %w", s, ErrTooLarge)
+	if !ok || abs(p) > MaxCorridorTerm || q > MaxCorridorTerm {
+		return nil, fmt.Errorf("farey: crossings of the arc of slope %v: terms up to %d would be accepted: %w", s, MaxCorridorTerm, ErrTooLarge)
 	}
 	return func(yield func(Crossing) bool) {
 		if s.IsBase() {

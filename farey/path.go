@@ -3,6 +3,7 @@ package farey
 import (
 	"bytes"
 	"fmt"
+	"iter"
 	"math/big"
 
 	"example.com/onecusp/contfrac"
@@ -118,6 +119,34 @@ func (p Path) First() Class { return p.first }
 // base triangle.
 func (p Path) Moves() contfrac.Word { return p.moves }
 
+// Flips returns the classes of the vertices that the path flips, in order: First,
+// then one for each letter of the moves. Flipping the base triangle by them leads to
+// the path's triangle. The iterator can be used again and stopped anywhere; it takes
+// constant time for each flip.
+func (p Path) Flips() iter.Seq[Class] {
+	return func(yield func(Class) bool) {
+		if !p.leaves || !yield(p.first) {
+			return
+		}
+		// Classes of the edge (a, b); the newest vertex, about to be kept, has the third.
+		// First = Infinity starts from (Zero, One), Zero from (One, Infinity), One from
+		// (Infinity, Zero).
+		a, b := (p.first+2)%3, (p.first+1)%3
+		for letter := range p.moves.Letters() {
+			newest := a.Third(b)
+			flipped := b
+			if letter == contfrac.L {
+				b = newest
+			} else {
+				flipped, a = a, newest
+			}
+			if !yield(flipped) {
+				return
+			}
+		}
+	}
+}
+
 // Edge returns the oriented edge (a, b) and the vertex c behind it at the end of the
 // path: the triangle crossed last is {a, b, c}, and the path's triangle has the
 // mediant of a and b in place of c. The path that stays at the base triangle has no such edge
@@ -214,18 +243,27 @@ func (p Path) text(moves string) string {
 	}
 }
 
-// Format implements [fmt.Formatter]: %s prints the path whole, %v with long moves
-// shortened.
+// Format implements [fmt.Formatter]: %s prints the path whole, %v with moves of many
+// runs or digits shortened; what is shortened is no text for [Path.UnmarshalText].
 func (p Path) Format(f fmt.State, verb rune) {
-	formatText(f, verb, "farey.Path", p.String, func() string { return p.text(fmt.Sprintf("%v", p.moves)) })
+	formatText(f, verb, "farey.Path", p.String, p.short)
+}
+
+// short returns the text of the path, with the moves shortened if long.
+func (p Path) short() string {
+	const manyRuns, manyBits = 16, 128
+	if p.moves.NumRuns() <= manyRuns && p.moves.Len().BitLen() <= manyBits {
+		return p.String()
+	}
+	return p.text(fmt.Sprintf("%v", p.moves))
 }
 
 // MarshalText returns the text of [Path.String].
 func (p Path) MarshalText() ([]byte, error) { return []byte(p.String()), nil }
 
-// UnmarshalText accepts exactly what [Path.String] prints; the moves are bounded as
-// by [contfrac.Word.UnmarshalText]. Otherwise it fails with [ErrSyntax], or the
-// error of contfrac about the moves, and leaves p alone.
+// UnmarshalText accepts exactly what [Path.String] prints, with moves within the
+// limits of [contfrac.Word.UnmarshalText]. Otherwise it fails with [ErrSyntax] or
+// [ErrTooLarge] and leaves p alone.
 func (p *Path) UnmarshalText(text []byte) error {
 	if string(text) == basePathText {
 		*p = Path{}

@@ -10,10 +10,10 @@ import (
 // 0.304·n².
 //
 // The iterator can be used again and stopped anywhere; it needs constant memory and
-// one division for each slope. It fails with [ErrNegative] unless n ≥ 1.
+// one division for each slope. It fails with [ErrBound] unless n ≥ 1.
 func Sequence(n int64) (iter.Seq[Slope], error) {
 	if n < 1 {
-		return nil, fmt.Errorf("farey: Farey sequence of order %d: an order of at least 1 would be accepted: %w", n, ErrNegative)
+		return nil, fmt.Errorf("farey: Farey sequence of order %d: an order of at least 1 would be accepted: %w", n, ErrBound)
 	}
 	return func(yield func(Slope) bool) {
 		climb(n, n, func(p, q int64) bool {
@@ -23,13 +23,13 @@ func Sequence(n int64) (iter.Seq[Slope], error) {
 }
 
 // Box returns all slopes p/q with |p| ≤ maxNum and q ≤ maxDen, increasing, with 1/0
-// last (if maxNum ≥ 1). The numbers add up to about 1.216·maxNum·maxDen slopes.
+// last (if maxNum ≥ 1). There are about 1.216·maxNum·maxDen of them.
 //
 // The iterator can be used again and stopped anywhere; it needs constant memory and
-// two divisions for each slope. It fails with [ErrNegative] for a negative bound.
+// two divisions for each slope. It fails with [ErrBound] for a negative bound.
 func Box(maxNum, maxDen int64) (iter.Seq[Slope], error) {
 	if maxNum < 0 || maxDen < 0 {
-		return nil, fmt.Errorf("farey: slopes with numerators up to %d and denominators up to %d: bounds of at least 0 would be accepted: %w", maxNum, maxDen, ErrNegative)
+		return nil, fmt.Errorf("farey: slopes with numerators up to %d and denominators up to %d: bounds of at least 0 would be accepted: %w", maxNum, maxDen, ErrBound)
 	}
 	return func(yield func(Slope) bool) {
 		// Turned upside down, q/p climbs from 0 while p/q falls from infinity: that is
