@@ -32,6 +32,9 @@ var (
 	// ErrPrecision reports a precision outside 1 … MaxLogPrecision.
 	ErrPrecision = errors.New("precision out of range")
 
+	// ErrNoSemiring reports a missing semiring.
+	ErrNoSemiring = errors.New("no semiring given")
+
 	// ErrCertificate reports a certificate with a field that is wrong.
 	ErrCertificate = errors.New("certificate does not hold")
 )

@@ -29,12 +29,13 @@ type vertex[T any] struct {
 // rule is the exchange rule (X) of a family over a ring.
 type rule[T any] struct {
 	ring[T]
+	family Family
 	k      T    // K
 	weight [3]T // by class
 }
 
 func newRule[T any](f Family, r ring[T]) rule[T] {
-	x := rule[T]{ring: r, k: r.from(f.K())}
+	x := rule[T]{ring: r, family: f, k: r.from(f.K())}
 	for _, c := range classes {
 		x.weight[c] = r.from(big.NewInt(f.weights[c]))
 	}

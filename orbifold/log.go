@@ -102,10 +102,15 @@ func (f Family) fits(ctx context.Context, s farey.Slope, copies int64) error {
 		return err
 	}
 	_, bits := l.bits()
-	if bits.Mul(bits, big.NewInt(copies)).Cmp(limit) <= 0 {
+	if total := new(big.Int).Mul(bits, big.NewInt(copies)); total.Cmp(limit) <= 0 {
 		return nil
 	}
-	return fmt.Errorf("orbifold: number at %v: about %s bits, the limit is %d (WithLimit sets it): %w", s, brief(bits), f.Limit(), ErrTooLarge)
+	what := "the result"
+	if copies > 1 {
+		what = fmt.Sprintf("a result of %d such numbers", copies)
+	}
+	return fmt.Errorf("orbifold: number at %v in family %v: about %s bits; %s may have %d bits (WithLimit sets it): %w",
+		s, f, brief(bits), what, f.Limit(), ErrTooLarge)
 }
 
 // logSpan encloses the logarithm of the number at s.
