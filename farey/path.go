@@ -158,15 +158,8 @@ func (p Path) Edge() (a, b, c Slope) {
 		return Zero.Slope(), One.Slope(), Infinity.Slope()
 	}
 	va, vb := p.vectors()
-	vc := p.first.Slope()
-	if last, ok := p.moves.Last(); ok {
-		// The last move was L from (A, B | C) to (A, A⊕B | B), or R: the vertex behind is
-		// the difference.
-		if vc = vb.minus(va).slope(); last == contfrac.R {
-			vc = va.minus(vb).slope()
-		}
-	}
-	return va.slope(), vb.slope(), vc
+	// One of A and B is the sum of the other and C.
+	return va.slope(), vb.slope(), vb.minus(va).slope()
 }
 
 // Slope returns the newest vertex at the end of the path. For the path that stays at

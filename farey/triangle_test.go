@@ -2,6 +2,7 @@ package farey_test
 
 import (
 	"fmt"
+	"math"
 	"testing"
 
 	"github.com/stretchr/testify/require"
@@ -97,4 +98,22 @@ func TestTriangleFormat(t *testing.T) {
 		require.Equal(t, fmt.Sprintf("{%v, %v, %v}", a, b, c), fmt.Sprintf("%v", tri))
 	})
 	require.Equal(t, "%!d(farey.Triangle={0/1, 1/0, 1/1})", fmt.Sprintf("%d", farey.Triangle{}))
+}
+
+func TestNewestAtTheEndOfMachineIntegers(t *testing.T) {
+	// Here |p| + q passes 2⁶³, and the sums of terms pass it too.
+	const m = math.MaxInt64
+	for _, terms := range [][2]int64{{m - 1, m}, {m, m - 1}, {1 - m, m}, {m/2 + 1, m}, {-m, m/2 + 1}, {m, 1}, {1, m}, {1<<62 + 1, 1 << 62}} {
+		s, err := farey.FromInts(terms[0], terms[1])
+		require.NoError(t, err)
+		tri := s.Path().Triangle()
+		isTriangle(t, tri)
+		newest, ok := tri.Newest()
+		require.True(t, ok)
+		equalSlopes(t, s, tri.Vertex(newest))
+		for _, c := range allClasses {
+			isTriangle(t, tri.Flip(c))
+			require.Equal(t, tri, tri.Flip(c).Flip(c))
+		}
+	}
 }
