@@ -7,17 +7,17 @@ import (
 
 	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
+	"example.com/onecusp/snake"
 )
 
 // ring is the arithmetic that the exchange rule needs. The rule is the same
 // over the integers, modulo m and modulo a machine word; only the ring differs.
 // Elements are never changed in place.
 type ring[T any] interface {
-	from(x *big.Int) T
-	add(x, y T) T
-	sub(x, y T) T
-	mul(x, y T) T
-	isZero(x T) bool
+	snake.Semiring[T]
+	Sub(x, y T) T
+	From(x *big.Int) T
+	IsZero(x T) bool
 }
 
 // vertex is an arc of a triangle: its number and its class.
@@ -35,9 +35,9 @@ type rule[T any] struct {
 }
 
 func newRule[T any](f Family, r ring[T]) rule[T] {
-	x := rule[T]{ring: r, family: f, k: r.from(f.K())}
+	x := rule[T]{ring: r, family: f, k: r.From(f.K())}
 	for _, c := range classes {
-		x.weight[c] = r.from(big.NewInt(f.weights[c]))
+		x.weight[c] = r.From(big.NewInt(f.weights[c]))
 	}
 	return x
 }
@@ -45,42 +45,46 @@ func newRule[T any](f Family, r ring[T]) rule[T] {
 // base returns the base triangle, number 1 at each vertex.
 func (x rule[T]) base() (b [3]vertex[T]) {
 	for _, c := range classes {
-		b[c] = vertex[T]{x.from(big.NewInt(1)), c}
+		b[c] = vertex[T]{x.One(), c}
 	}
 	return b
 }
 
 // trace returns t = K·N − k for the arc v.
 func (x rule[T]) trace(v vertex[T]) T {
-	return x.sub(x.mul(x.k, v.number), x.weight[v.class])
+	return x.Sub(x.Mul(x.k, v.number), x.weight[v.class])
 }
 
 // flip returns the arc that replaces c in the triangle a, b, c, by the second
 // form of (X): c' = K·a·b − k_a·b − k_b·a − c, wherein K·a − k_a is the trace
 // at a.
 func (x rule[T]) flip(a, b, c vertex[T]) vertex[T] {
-	n := x.mul(x.trace(a), b.number)
-	if w := x.weight[b.class]; !x.isZero(w) {
-		n = x.sub(n, x.mul(w, a.number))
+	n := x.Mul(x.trace(a), b.number)
+	if w := x.weight[b.class]; !x.IsZero(w) {
+		n = x.Sub(n, x.Mul(w, a.number))
 	}
-	return vertex[T]{x.sub(n, c.number), c.class}
+	return vertex[T]{x.Sub(n, c.number), c.class}
 }
 
 // integers is the ring Z.
 type integers struct{}
 
-func (integers) from(x *big.Int) *big.Int   { return x }
-func (integers) add(x, y *big.Int) *big.Int { return new(big.Int).Add(x, y) }
-func (integers) sub(x, y *big.Int) *big.Int { return new(big.Int).Sub(x, y) }
-func (integers) mul(x, y *big.Int) *big.Int { return contfrac.Product(x, y) }
-func (integers) isZero(x *big.Int) bool     { return x.Sign() == 0 }
+func (integers) Zero() *big.Int             { return new(big.Int) }
+func (integers) One() *big.Int              { return big.NewInt(1) }
+func (integers) From(x *big.Int) *big.Int   { return x }
+func (integers) Add(x, y *big.Int) *big.Int { return new(big.Int).Add(x, y) }
+func (integers) Sub(x, y *big.Int) *big.Int { return new(big.Int).Sub(x, y) }
+func (integers) Mul(x, y *big.Int) *big.Int { return contfrac.Product(x, y) }
+func (integers) IsZero(x *big.Int) bool     { return x.Sign() == 0 }
 
 // residues is the ring Z/m, with representatives 0 … m−1.
 type residues struct{ m *big.Int }
 
-func (r residues) from(x *big.Int) *big.Int { return new(big.Int).Mod(x, r.m) }
+func (residues) Zero() *big.Int             { return new(big.Int) }
+func (r residues) One() *big.Int            { return r.From(big.NewInt(1)) }
+func (r residues) From(x *big.Int) *big.Int { return new(big.Int).Mod(x, r.m) }
 
-func (r residues) add(x, y *big.Int) *big.Int {
+func (r residues) Add(x, y *big.Int) *big.Int {
 	z := new(big.Int).Add(x, y)
 	if z.Cmp(r.m) >= 0 {
 		z.Sub(z, r.m)
@@ -88,7 +92,7 @@ func (r residues) add(x, y *big.Int) *big.Int {
 	return z
 }
 
-func (r residues) sub(x, y *big.Int) *big.Int {
+func (r residues) Sub(x, y *big.Int) *big.Int {
 	z := new(big.Int).Sub(x, y)
 	if z.Sign() < 0 {
 		z.Add(z, r.m)
@@ -96,7 +100,7 @@ func (r residues) sub(x, y *big.Int) *big.Int {
 	return z
 }
 
-func (r residues) mul(x, y *big.Int) *big.Int {
+func (r residues) Mul(x, y *big.Int) *big.Int {
 	z := contfrac.Product(x, y)
 	if z.Cmp(r.m) >= 0 {
 		z.Rem(z, r.m)
@@ -104,16 +108,19 @@ func (r residues) mul(x, y *big.Int) *big.Int {
 	return z
 }
 
-func (residues) isZero(x *big.Int) bool { return x.Sign() == 0 }
+func (residues) IsZero(x *big.Int) bool { return x.Sign() == 0 }
 
 // wordResidues is the ring Z/m for a modulus that fits a machine word.
 type wordResidues struct{ m uint64 }
 
-func (r wordResidues) from(x *big.Int) uint64 {
+func (wordResidues) Zero() uint64  { return 0 }
+func (r wordResidues) One() uint64 { return 1 % r.m }
+
+func (r wordResidues) From(x *big.Int) uint64 {
 	return new(big.Int).Mod(x, new(big.Int).SetUint64(r.m)).Uint64()
 }
 
-func (r wordResidues) add(x, y uint64) uint64 {
+func (r wordResidues) Add(x, y uint64) uint64 {
 	z, carry := bits.Add64(x, y, 0)
 	if carry != 0 || z >= r.m {
 		z -= r.m
@@ -121,7 +128,7 @@ func (r wordResidues) add(x, y uint64) uint64 {
 	return z
 }
 
-func (r wordResidues) sub(x, y uint64) uint64 {
+func (r wordResidues) Sub(x, y uint64) uint64 {
 	z, borrow := bits.Sub64(x, y, 0)
 	if borrow != 0 {
 		z += r.m
@@ -129,13 +136,13 @@ func (r wordResidues) sub(x, y uint64) uint64 {
 	return z
 }
 
-func (r wordResidues) mul(x, y uint64) uint64 {
+func (r wordResidues) Mul(x, y uint64) uint64 {
 	hi, lo := bits.Mul64(x, y)
 	_, rem := bits.Div64(hi, lo, r.m) // hi < m, since both factors are < m
 	return rem
 }
 
-func (wordResidues) isZero(x uint64) bool { return x == 0 }
+func (wordResidues) IsZero(x uint64) bool { return x == 0 }
 
 // Solves returns nil when x, y, z at the classes of 0/1, 1/0 and 1/1 solve
 //

@@ -33,11 +33,11 @@ func (f fan[T]) class(n *big.Int) farey.Class { return f.y[n.Bit(0)].class }
 
 // next returns arc i+1 from the arcs i and i−1.
 func (f fan[T]) next(cur, prev vertex[T]) vertex[T] {
-	n := f.x.mul(f.t, cur.number)
-	if w := f.x.weight[cur.class]; !f.x.isZero(w) {
-		n = f.x.sub(n, f.x.mul(w, f.pivot.number))
+	n := f.x.Mul(f.t, cur.number)
+	if w := f.x.weight[cur.class]; !f.x.IsZero(w) {
+		n = f.x.Sub(n, f.x.Mul(w, f.pivot.number))
 	}
-	return vertex[T]{f.x.sub(n, prev.number), prev.class}
+	return vertex[T]{f.x.Sub(n, prev.number), prev.class}
 }
 
 // pair returns the arcs n and n+1, for two multiplications of the size of the
@@ -90,21 +90,21 @@ type shift[T any] struct {
 // jump returns arc m+j from arc m (class of its neighbours: other) and arc m−j.
 func (f fan[T]) jump(mid vertex[T], other farey.Class, s shift[T], back vertex[T]) vertex[T] {
 	x := f.x
-	n := x.sub(x.mul(s.v, mid.number), back.number)
+	n := x.Sub(x.Mul(s.v, mid.number), back.number)
 	c, d := x.weight[mid.class], x.weight[other]
-	if !x.isZero(c) || !x.isZero(d) {
-		w := x.mul(s.g, x.add(x.mul(f.t, c), x.add(d, d)))
+	if !x.IsZero(c) || !x.IsZero(d) {
+		w := x.Mul(s.g, x.Add(x.Mul(f.t, c), x.Add(d, d)))
 		if s.odd {
-			w = x.add(w, c)
+			w = x.Add(w, c)
 		}
-		n = x.sub(n, x.mul(w, f.pivot.number))
+		n = x.Sub(n, x.Mul(w, f.pivot.number))
 	}
 	return vertex[T]{n, back.class}
 }
 
 // weighted tells whether the law of this fan has an inhomogeneous part.
 func (f fan[T]) weighted() bool {
-	return !f.x.isZero(f.x.weight[f.y[0].class]) || !f.x.isZero(f.x.weight[f.y[1].class])
+	return !f.x.IsZero(f.x.weight[f.y[0].class]) || !f.x.IsZero(f.x.weight[f.y[1].class])
 }
 
 // leap returns arc n+1 and, when both is set, arc n, for n ≥ 1. It goes through
@@ -113,10 +113,10 @@ func (f fan[T]) weighted() bool {
 func (f fan[T]) leap(n *big.Int, both bool) (lo, hi vertex[T]) {
 	x := f.x
 	lo, hi = f.y[0], f.y[1]
-	two := x.from(big.NewInt(2))
+	two := x.From(big.NewInt(2))
 	var zero, one T
 	if f.weighted() {
-		zero, one = x.from(new(big.Int)), x.from(big.NewInt(1))
+		zero, one = x.Zero(), x.One()
 	}
 	s0, s1 := shift[T]{v: two, g: zero}, shift[T]{v: f.t, g: zero, odd: true}
 	for b := n.BitLen() - 1; b >= 0 && f.step(); b-- {
@@ -162,14 +162,14 @@ func (f fan[T]) double(s shift[T], want bool, one, two T) (d shift[T]) {
 		return d
 	}
 	x := f.x
-	d.v = x.sub(x.mul(s.v, s.v), two)
+	d.v = x.Sub(x.Mul(s.v, s.v), two)
 	switch {
 	case !f.weighted():
 	case !s.odd:
-		d.g = x.mul(s.g, x.add(s.v, two))
+		d.g = x.Mul(s.g, x.Add(s.v, two))
 	default:
-		tg, gg := x.mul(f.t, s.g), x.add(s.g, s.g)
-		d.g = x.mul(x.add(one, x.sub(tg, gg)), x.add(one, x.add(tg, gg)))
+		tg, gg := x.Mul(f.t, s.g), x.Add(s.g, s.g)
+		d.g = x.Mul(x.Add(one, x.Sub(tg, gg)), x.Add(one, x.Add(tg, gg)))
 	}
 	return d
 }
@@ -182,14 +182,13 @@ func (f fan[T]) between(lo, hi shift[T], want bool, two T) (d shift[T]) {
 		return d
 	}
 	x := f.x
-	d.v, d.odd = x.sub(x.mul(lo.v, hi.v), f.t), true
+	d.v, d.odd = x.Sub(x.Mul(lo.v, hi.v), f.t), true
 	if f.weighted() {
 		even, odd := lo, hi
 		if lo.odd {
 			even, odd = hi, lo
 		}
-		d.g = x.add(x.mul(two, odd.g), x.mul(even.g, odd.v))
+		d.g = x.Add(x.Mul(two, odd.g), x.Mul(even.g, odd.v))
 	}
 	return d
 }
-
