@@ -34,6 +34,7 @@ type drawnEdge struct {
 	Side
 	from, to Point
 	matched  bool
+	cut      bool // one of the two copies of the edge where a band is cut
 }
 
 // chordStretch is how far a hexagon pushes the ends of its chord outwards.
@@ -41,12 +42,27 @@ const chordStretch = 0.22
 
 // picture checks the drawing and lays the graph out.
 func (g Graph) picture(d Drawing) (*picture, error) {
-	if _, err := g.layout("picture", MaxDrawnTiles); err != nil {
+	s, err := g.layout("picture", MaxDrawnTiles)
+	if err != nil {
 		return nil, err
 	}
+	return Set{s: s, side: g.singleSide()}.picture(d)
+}
+
+// picture checks the drawing and lays the band out, cut.
+func (b Band) picture(d Drawing) (*picture, error) {
+	s, err := b.layout("picture", MaxDrawnTiles)
+	if err != nil {
+		return nil, err
+	}
+	return Set{s: s, none: s == nil}.picture(d)
+}
+
+// picture checks the drawing and lays the graph of the set out.
+func (t Set) picture(d Drawing) (*picture, error) {
 	used := map[Side]bool{}
 	if d.Matching != nil {
-		edges, err := g.EdgesOf(*d.Matching)
+		edges, err := t.EdgesOf(*d.Matching)
 		if err != nil {
 			return nil, fmt.Errorf("snake: picture: %w", err)
 		}
@@ -54,21 +70,25 @@ func (g Graph) picture(d Drawing) (*picture, error) {
 			used[e] = true
 		}
 	}
-	n := g.Tiles()
-	p := &picture{Drawing: d, moved: map[Point]spot{}, pair: make([]bool, n+2), max: Point{0, 1}}
-	for t := range g.AllTiles() {
-		p.tiles = append(p.tiles, t)
-		p.max = Point{t.At.X + 1, t.At.Y + 1}
+	p := &picture{Drawing: d, moved: map[Point]spot{}, pair: make([]bool, t.Tiles()+2), max: Point{0, 1}}
+	for tile := range t.s.walk() {
+		p.tiles = append(p.tiles, tile)
+		p.max = Point{tile.At.X + 1, tile.At.Y + 1}
 	}
-	for e := range g.Edges() {
+	for e := range t.edges() {
 		from, to := Point{}, Point{0, 1}
 		if e.Tile > 0 {
 			from, to = p.tiles[e.Tile-1].Ends(e.Face)
 		}
-		p.edges = append(p.edges, drawnEdge{e, from, to, used[e]})
+		cut := t.s != nil && t.s.closed && e.Tile == t.s.n && e.Face == t.s.dir[t.s.n].exit()
+		p.edges = append(p.edges, drawnEdge{e, from, to, used[e], cut})
+		if cut { // the other copy
+			from, to = p.tiles[0].Ends(t.s.dir[0].entry())
+			p.edges = append(p.edges, drawnEdge{e, from, to, used[e], cut})
+		}
 	}
 	if d.Hexagons {
-		for h := range g.Hexagons() {
+		for h := range t.s.hexagons() {
 			p.pair[h.First] = true
 			a, b := p.tiles[h.First-1].Ends(h.Chord.Face)
 			dx, dy := chordStretch*float64(b.X-a.X), chordStretch*float64(b.Y-a.Y)
@@ -131,6 +151,52 @@ func (p *picture) inside(t Tile) string {
 		return p.Name(t.Diagonal)
 	}
 	return ""
+}
+
+// texts places the texts: of the tiles, one for a hexagon beside its chord,
+// then of the edges.
+func (p *picture) texts(put func(at spot, l Label, text string, edge bool)) {
+	for i := 1; i <= len(p.tiles); i++ {
+		t := p.tiles[i-1]
+		k := t.Corners()
+		at := middle([]spot{p.at(k[0]), p.at(k[1]), p.at(k[2]), p.at(k[3])})
+		together := p.pair[i] && !p.Numbers
+		if together {
+			at = middle([]spot{middle(p.outline(i)), middle(p.outline(i + 1))})
+		}
+		if s := p.inside(t); s != "" {
+			put(at, t.Diagonal, s, false)
+		}
+		if together {
+			i++
+		}
+	}
+	if !p.EdgeNames || p.Name == nil {
+		return
+	}
+	for _, e := range p.edges {
+		if e.Label != NoLabel {
+			part := .5
+			if e.cut {
+				part = 1 - p.cutMark()
+			}
+			put(between(p.at(e.from), p.at(e.to), part), e.Label, p.Name(e.Label), true)
+		}
+	}
+}
+
+// cutMark is the part of the way along a cut edge at which its mark stands, so
+// that there is room for a name.
+func (p *picture) cutMark() float64 {
+	if p.EdgeNames {
+		return .68
+	}
+	return .5
+}
+
+// between is the spot at a part of the way from a to b.
+func between(a, b spot, part float64) spot {
+	return spot{a.x + part*(b.x-a.x), a.y + part*(b.y-a.y)}
 }
 
 // middle is the centre of gravity of some spots.

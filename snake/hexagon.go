@@ -18,18 +18,22 @@ type Hexagon struct {
 // Hexagons yields the hexagons of the graph in order. Graphs made from a word
 // have none, since a word does not say which letters belong to one crossing.
 // It can be run again.
-func (g Graph) Hexagons() iter.Seq[Hexagon] {
+func (g Graph) Hexagons() iter.Seq[Hexagon] { return g.s.hexagons() }
+
+// Hexagons yields the hexagons of the band in order. It can be run again.
+func (b Band) Hexagons() iter.Seq[Hexagon] { return b.s.hexagons() }
+
+func (s *shape) hexagons() iter.Seq[Hexagon] {
 	return func(yield func(Hexagon) bool) {
-		l := g.labels()
-		if l == nil {
+		if s == nil || s.lab == nil {
 			return
 		}
-		own := func(i int) bool { return i >= 1 && i < g.s.n && l.own[i-1] }
-		for i := 1; i < g.s.n; i++ {
+		own := func(i int) bool { return i >= 1 && i < s.n && s.lab.own[i-1] }
+		for i := 1; i < s.n; i++ {
 			if !own(i) || own(i-1) || own(i+1) {
 				continue
 			}
-			if !yield(Hexagon{i, g.s.side(i, g.s.dir[i].exit()), l.diagonal[i-1]}) {
+			if !yield(Hexagon{i, s.side(i, s.dir[i].exit()), s.diagonal(i)}) {
 				return
 			}
 		}

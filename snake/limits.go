@@ -3,6 +3,9 @@ package snake
 import (
 	"errors"
 	"fmt"
+	"math/big"
+
+	"example.com/onecusp/contfrac"
 )
 
 // MaxTiles is the largest number of tiles whose shape is laid out in memory
@@ -23,9 +26,47 @@ var (
 	// ErrNotMatching reports a set of flipped tiles that is no matching of the
 	// graph or set it was used with.
 	ErrNotMatching = errors.New("not a matching of this graph")
-	// ErrIndex reports an index outside a listing, or any index into an empty one.
+	// ErrTooMany reports a set with more matchings than the caller is ready to
+	// hold; a [TooManyError] in the chain has the exact number.
+	ErrTooMany = errors.New("too many matchings")
+	// ErrIndex reports an index outside a listing, or any index into an empty
+	// one; also the number of a variable, or an exponent, outside its range.
 	ErrIndex = errors.New("index out of range")
+	// ErrTooLarge reports a number that would be too large to hold.
+	ErrTooLarge = errors.New("number too large")
+	// ErrNotCrossing reports a common piece of two graphs in which they do not cross.
+	ErrNotCrossing = errors.New("not a crossing")
+	// ErrModulus reports a modulus below 1.
+	ErrModulus = errors.New("modulus must be positive")
 )
+
+// TooManyError tells how many matchings there are, where fewer were asked for.
+// It wraps [ErrTooMany].
+type TooManyError struct {
+	Count *big.Int // how many there are, exactly
+	Limit int      // how many were accepted
+}
+
+// Error returns a sentence with both numbers, the count shortened when it is long.
+func (e *TooManyError) Error() string {
+	return fmt.Sprintf("snake: %s matchings, at most %d are accepted: %v", contfrac.Abbreviate(e.Count), e.Limit, ErrTooMany)
+}
+
+// Unwrap returns [ErrTooMany].
+func (e *TooManyError) Unwrap() error { return ErrTooMany }
+
+func tooMany(count, limit int) error {
+	return &TooManyError{big.NewInt(int64(count)), limit}
+}
+
+// within returns the count of a set, or the error when it is above the limit.
+func (t Set) within(limit int) (int, error) {
+	count := t.Count()
+	if count.Cmp(big.NewInt(int64(max(limit, 0)))) > 0 {
+		return 0, &TooManyError{count, limit}
+	}
+	return int(count.Int64()), nil
+}
 
 // shorten quotes an offending text, cut when it is long.
 func shorten(s string) string {

@@ -18,6 +18,7 @@ type Set struct {
 	none  bool    // a restriction has emptied it for good
 	allow []uint8 // allow[i−1]: mask of the steps allowed at tile i; nil for all
 	end   uint8   // mask of the end states that an open chain may not end in
+	table *completions
 }
 
 // Set returns the set of all perfect matchings. It returns [ErrTooLong] past
@@ -27,7 +28,7 @@ func (g Graph) Set() (Set, error) {
 	if err != nil {
 		return Set{}, err
 	}
-	return Set{s: s, side: g.singleSide()}, nil
+	return Set{s: s, side: g.singleSide(), table: new(completions)}, nil
 }
 
 // Tiles returns the number of tiles of the graph.
@@ -49,8 +50,7 @@ func (t Set) mask(tile int) uint8 {
 	return t.allow[tile-1]
 }
 
-// only returns the set with the steps of one tile limited to those that a test
-// accepts.
+// only returns the set with the steps of one tile limited to those that a test accepts.
 func (t Set) only(tile int, accept func(step) bool) Set {
 	allow := make([]uint8, t.s.n)
 	for i := range allow {
@@ -61,7 +61,7 @@ func (t Set) only(tile int, accept func(step) bool) Set {
 			allow[tile-1] &^= 1 << k
 		}
 	}
-	t.allow = allow
+	t.allow, t.table = allow, new(completions)
 	return t
 }
 
@@ -111,6 +111,7 @@ func (t Set) WithEdge(e Side, used bool) (Set, error) {
 	} else {
 		t.end |= 1 << free
 	}
+	t.table = new(completions)
 	return t, nil
 }
 

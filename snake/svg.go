@@ -11,9 +11,9 @@ import (
 // differ in hue (safe for the common colour blindnesses) and in lightness (so they stay
 // apart in grey print), and every ink has its own dash pattern besides.
 var (
-	tints = []string{"#ffffff", "#f7e3b5", "#b9d4e6", "#dcdfe3", "#f2c9ae", "#cfe3c8"}
-	inks  = []string{"#7b8794", "#a86b00", "#13507d", "#4a5568", "#b3401f", "#2f6b3a"}
-	dashs = []string{"2 4", "7 4", "1.5 3.5", "9 3 2 3", "4 2", "2 2 6 2"}
+	tints  = []string{"#ffffff", "#f7e3b5", "#b9d4e6", "#dcdfe3", "#f2c9ae", "#cfe3c8"}
+	inks   = []string{"#7b8794", "#a86b00", "#13507d", "#4a5568", "#b3401f", "#2f6b3a"}
+	dashes = []string{"2 4", "7 4", "1.5 3.5", "9 3 2 3", "4 2", "2 2 6 2"}
 )
 
 const (
@@ -25,12 +25,13 @@ const (
 	hatch     = "#24405c"
 )
 
-// byLabel picks the entry of a list for a label; the first is for NoLabel, the others are repeated.
-func byLabel(list []string, l Label) string {
+// shade is the place of a label in these lists: the first is for NoLabel, the
+// others are used in turn.
+func shade(l Label) int {
 	if l == NoLabel {
-		return list[0]
+		return 0
 	}
-	return list[1+(int(l)-1)%(len(list)-1)]
+	return 1 + (int(l)-1)%(len(tints)-1)
 }
 
 // SVG draws the graph as a self-contained SVG image: tiles tinted by the label of
@@ -43,10 +44,24 @@ func (g Graph) SVG(d Drawing) (string, error) {
 	if err != nil {
 		return "", err
 	}
+	return p.svg(g.describe("%v")), nil
+}
+
+// SVG draws the band, cut between its last and its first tile: the two copies of
+// the cut edge are dashed and marked with arrows of one kind. Errors as for [Graph.SVG].
+func (b Band) SVG(d Drawing) (string, error) {
+	p, err := b.picture(d)
+	if err != nil {
+		return "", err
+	}
+	return p.svg(b.describe("%v")), nil
+}
+
+func (p *picture) svg(title string) string {
 	low, high := p.bounds()
 	c := canvas{unit: svgUnit, left: svgMargin - low.x*svgUnit, top: svgMargin + high.y*svgUnit}
 	c.draw(p)
-	return c.document((high.x-low.x)*svgUnit+2*svgMargin, (high.y-low.y)*svgUnit+2*svgMargin, g.describe("%v")), nil
+	return c.document((high.x-low.x)*svgUnit+2*svgMargin, (high.y-low.y)*svgUnit+2*svgMargin, title)
 }
 
 // bounds are the lower left and upper right corner of everything drawn.
@@ -96,6 +111,19 @@ func (c *canvas) text(s spot, size float64, ink, halo, text string) {
 		c.x(s), c.y(s), decimal(size), ink, halo, decimal(size/4), html.EscapeString(text))
 }
 
+// arrow marks a copy of a cut edge: both copies are glued as the arrows point,
+// away from the origin. It stands at a part of the way.
+func (c *canvas) arrow(a, b spot, part float64) {
+	m := between(a, b, part)
+	dx, dy := b.x-a.x, b.y-a.y
+	const long, wide = .13, .1
+	c.polygon([]spot{
+		{m.x + long*dx, m.y + long*dy},
+		{m.x - long*dx - wide*dy, m.y - long*dy + wide*dx},
+		{m.x - long*dx + wide*dy, m.y - long*dy - wide*dx},
+	}, fmt.Sprintf(`fill="%s" stroke="%s" stroke-width="1"`, heavy, paper))
+}
+
 // document wraps what was drawn.
 func (c *canvas) document(width, height float64, title string) string {
 	return fmt.Sprintf(`<svg xmlns="http://www.w3.org/2000/svg" width="%s" height="%s" viewBox="0 0 %s %s" role="img" font-family="'DejaVu Sans', Verdana, sans-serif">
@@ -111,7 +139,7 @@ func (c *canvas) draw(p *picture) {
 	u := c.unit
 	for i := 1; i <= len(p.tiles); i++ {
 		t := p.tiles[i-1]
-		c.polygon(p.outline(i), fmt.Sprintf(`fill="%s"`, byLabel(tints, t.Diagonal)))
+		c.polygon(p.outline(i), fmt.Sprintf(`fill="%s"`, tints[shade(t.Diagonal)]))
 		if p.pair[i] {
 			i++
 		}
@@ -127,41 +155,36 @@ func (c *canvas) draw(p *picture) {
 	for _, t := range p.tiles {
 		k := t.Corners()
 		c.line(p.at(k[3]), p.at(k[1]), fmt.Sprintf(`stroke="%s" stroke-width="%s" stroke-dasharray="%s"`,
-			byLabel(inks, t.Diagonal), decimal(u/50), byLabel(dashs, t.Diagonal)))
+			inks[shade(t.Diagonal)], decimal(max(u/50, .7)), dashes[shade(t.Diagonal)]))
 	}
 	for _, e := range p.edges {
 		if !e.matched {
-			c.line(p.at(e.from), p.at(e.to), fmt.Sprintf(`stroke="%s" stroke-width="%s"`, outline, decimal(u/38)))
+			dash := ""
+			if e.cut {
+				dash = ` stroke-dasharray="3 4"`
+			}
+			c.line(p.at(e.from), p.at(e.to), fmt.Sprintf(`stroke="%s" stroke-width="%s"%s`, outline, decimal(max(u/38, .9)), dash))
 		}
 	}
 	for _, e := range p.edges {
 		if e.matched {
-			c.line(p.at(e.from), p.at(e.to), fmt.Sprintf(`stroke="%s" stroke-width="%s" stroke-linecap="round"`, heavy, decimal(u/9)))
+			c.line(p.at(e.from), p.at(e.to), fmt.Sprintf(`stroke="%s" stroke-width="%s" stroke-linecap="round"`, heavy, decimal(max(u/9, 2.6))))
+		}
+	}
+	for _, e := range p.edges {
+		if e.cut {
+			c.arrow(p.at(e.from), p.at(e.to), p.cutMark())
 		}
 	}
 	for _, v := range p.vertices() {
 		s := p.at(v)
 		c.add(`<circle cx="%s" cy="%s" r="%s" fill="%s"/>`, c.x(s), c.y(s), decimal(u/18), heavy)
 	}
-	for i := 1; i <= len(p.tiles); i++ {
-		t := p.tiles[i-1]
-		corners := p.outline(i)
-		at := middle(corners)
-		if p.pair[i] && !p.Numbers { // one text for both tiles, beside the chord
-			at = middle([]spot{at, middle(p.outline(i + 1))})
+	p.texts(func(at spot, l Label, text string, edge bool) {
+		if edge {
+			c.text(at, u*.19, inks[shade(l)], paper, text)
+		} else {
+			c.text(at, u*.27, heavy, tints[shade(l)], text)
 		}
-		if s := p.inside(t); s != "" {
-			c.text(at, u*.27, heavy, byLabel(tints, t.Diagonal), s)
-		}
-		if p.pair[i] && !p.Numbers {
-			i++
-		}
-	}
-	if p.EdgeNames && p.Name != nil {
-		for _, e := range p.edges {
-			if e.Label != NoLabel {
-				c.text(middle([]spot{p.at(e.from), p.at(e.to)}), u*.19, byLabel(inks, e.Label), paper, p.Name(e.Label))
-			}
-		}
-	}
+	})
 }

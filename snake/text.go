@@ -15,14 +15,17 @@ func (g Graph) String() string { return g.describe("%s") }
 
 // Format implements fmt.Formatter: %s writes what String returns, %q quotes it, %v and
 // every other verb shorten a long word.
-func (g Graph) Format(f fmt.State, verb rune) {
+func (g Graph) Format(f fmt.State, verb rune) { formatAs(f, verb, g.describe) }
+
+// formatAs prints a description in full for %s and %q, shortened otherwise.
+func formatAs(f fmt.State, verb rune, describe func(verb string) string) {
 	switch verb {
 	case 's':
-		fmt.Fprint(f, g.String())
+		fmt.Fprint(f, describe("%s"))
 	case 'q':
-		fmt.Fprintf(f, "%q", g.String())
+		fmt.Fprintf(f, "%q", describe("%s"))
 	default:
-		fmt.Fprint(f, g.describe("%v"))
+		fmt.Fprint(f, describe("%v"))
 	}
 }
 
@@ -56,6 +59,20 @@ func (g Graph) Text(d Drawing) (string, error) {
 	if err != nil {
 		return "", err
 	}
+	return p.text(), nil
+}
+
+// Text draws the band, cut between its last and its first tile: the two copies of the cut
+// edge are dotted, or heavy both when it is matched. Errors as for [Graph.Text].
+func (b Band) Text(d Drawing) (string, error) {
+	p, err := b.picture(d)
+	if err != nil {
+		return "", err
+	}
+	return p.text(), nil
+}
+
+func (p *picture) text() string {
 	const wide, high = 4, 2 // characters from vertex to vertex
 	rows := make([][]rune, p.max.Y*high+1)
 	for i := range rows {
@@ -66,10 +83,10 @@ func (g Graph) Text(d Drawing) (string, error) {
 		x, y := e.from.X*wide, e.from.Y*high
 		if e.from.Y == e.to.Y {
 			for k := 1; k < wide; k++ {
-				put(x+k, y, pick(e.matched, '━', '─'))
+				put(x+k, y, e.pick('━', '┄', '─'))
 			}
 		} else {
-			put(x, y+1, pick(e.matched, '┃', '│'))
+			put(x, y+1, e.pick('┃', '┆', '│'))
 		}
 	}
 	for _, v := range p.vertices() {
@@ -100,12 +117,16 @@ func (g Graph) Text(d Drawing) (string, error) {
 		b.WriteString(strings.TrimRight(string(row), " "))
 		b.WriteByte('\n')
 	}
-	return b.String(), nil
+	return b.String()
 }
 
-func pick[T any](first bool, a, b T) T {
-	if first {
-		return a
+// pick chooses the character of an edge.
+func (e drawnEdge) pick(matched, cut, plain rune) rune {
+	switch {
+	case e.matched:
+		return matched
+	case e.cut:
+		return cut
 	}
-	return b
+	return plain
 }

@@ -37,6 +37,9 @@ func (t Tile) Ends(f Face) (Point, Point) {
 // walk yields the tiles in order.
 func (s *shape) walk() iter.Seq[Tile] {
 	return func(yield func(Tile) bool) {
+		if s == nil {
+			return
+		}
 		at := Point{}
 		for i := 1; i <= s.n; i++ {
 			if !yield(Tile{i, at, s.dir[i-1], s.dir[i], s.diagonal(i)}) {
@@ -54,10 +57,14 @@ func (s *shape) walk() iter.Seq[Tile] {
 // AllTiles yields the tiles from the first to the last. It can be run again.
 // A graph of more than [MaxTiles] tiles yields nothing.
 func (g Graph) AllTiles() iter.Seq[Tile] {
-	s, err := g.layout("tiles", MaxTiles)
-	if err != nil || s == nil {
-		return func(func(Tile) bool) {}
-	}
+	s, _ := g.layout("tiles", MaxTiles)
+	return s.walk()
+}
+
+// AllTiles yields the tiles from the first to the last, as they lie when the band is cut
+// between the last and the first. It can be run again. A band of more than [MaxTiles] tiles yields nothing.
+func (b Band) AllTiles() iter.Seq[Tile] {
+	s, _ := b.layout("tiles", MaxTiles)
 	return s.walk()
 }
 
@@ -66,18 +73,26 @@ func (g Graph) AllTiles() iter.Seq[Tile] {
 // can be run again. A graph of more than [MaxTiles] tiles yields nothing.
 // A graph of n tiles has 3n + 1 edges and 2n + 2 vertices.
 func (g Graph) Edges() iter.Seq[Side] {
-	s, err := g.layout("edges", MaxTiles)
+	t, err := g.Set()
+	if err != nil {
+		return func(func(Side) bool) {}
+	}
+	return t.edges()
+}
+
+// edges yields the edges of the set's graph, each once.
+func (t Set) edges() iter.Seq[Side] {
 	return func(yield func(Side) bool) {
-		switch {
-		case err != nil:
-		case s == nil:
-			yield(g.singleSide())
-		default:
-			for i := 1; i <= s.n; i++ {
-				for f := South; f <= West; f++ {
-					if e := s.side(i, f); e.Tile == i && !yield(e) {
-						return
-					}
+		if t.s == nil {
+			if !t.none {
+				yield(t.side)
+			}
+			return
+		}
+		for i := 1; i <= t.s.n; i++ {
+			for f := South; f <= West; f++ {
+				if e := t.s.side(i, f); e.Tile == i && e.Face == f && !yield(e) {
+					return
 				}
 			}
 		}

@@ -1,0 +1,125 @@
+package snake
+
+import (
+	"cmp"
+	"fmt"
+	"slices"
+)
+
+// MaxDrawnMatchings is the largest number of matchings that [Hasse.SVG] draws.
+const MaxDrawnMatchings = 400
+
+// SVG draws the diagram as a self-contained SVG image, growing upwards, with a
+// small picture of the matching at every node and the flipped tile's number at
+// every line. The Drawing's Matching is ignored, and texts are left out of the small pictures.
+//
+// It returns a [*TooManyError] past [MaxDrawnMatchings] matchings and
+// [ErrTooLong] past [MaxDrawnTiles] tiles.
+func (h Hasse) SVG(d Drawing) (string, error) {
+	if len(h.nodes) > MaxDrawnMatchings {
+		return "", tooMany(len(h.nodes), MaxDrawnMatchings)
+	}
+	if n := h.set.Tiles(); n > MaxDrawnTiles {
+		return "", fmt.Errorf("snake: picture of matchings of %s: at most %d are accepted: %w", tileCount(n), MaxDrawnTiles, ErrTooLong)
+	}
+	const (
+		unit, pad  = 15.0, 7.0
+		across, up = 20.0, 44.0 // gaps between boxes
+	)
+	d.Name, d.EdgeNames, d.Numbers = nil, false, false
+	pictures := make([]*picture, len(h.nodes))
+	for k, m := range h.nodes {
+		d.Matching = &m
+		p, err := h.set.picture(d)
+		if err != nil {
+			return "", err
+		}
+		pictures[k] = p
+	}
+	levels := h.arranged()
+	if len(levels) == 0 {
+		return (&canvas{}).document(2*svgMargin, 2*svgMargin, "no matchings"), nil
+	}
+	low, high := pictures[0].bounds()
+	boxWide, boxHigh := (high.x-low.x)*unit+2*pad, (high.y-low.y)*unit+2*pad
+	widest := 0
+	for _, l := range levels {
+		widest = max(widest, len(l))
+	}
+	width := float64(widest)*(boxWide+across) - across + 2*svgMargin
+	height := float64(len(levels))*(boxHigh+up) - up + 2*svgMargin
+	corner := make([]spot, len(h.nodes)) // upper left corner of the box, in pixels
+	for y, l := range levels {
+		left := (width - float64(len(l))*(boxWide+across) + across) / 2
+		for x, k := range l {
+			corner[k] = spot{left + float64(x)*(boxWide+across), height - svgMargin - float64(y)*(boxHigh+up) - boxHigh}
+		}
+	}
+	var c canvas
+	for _, a := range h.arcs {
+		x1, y1 := corner[a.Lower].x+boxWide/2, corner[a.Lower].y
+		x2, y2 := corner[a.Upper].x+boxWide/2, corner[a.Upper].y+boxHigh
+		c.add(`<line x1="%s" y1="%s" x2="%s" y2="%s" stroke="%s" stroke-width="1.4"/>`, decimal(x1), decimal(y1), decimal(x2), decimal(y2), outline)
+	}
+	for _, a := range h.arcs { // a third of the way up, where lines from one node have parted but not yet crossed
+		x1, y1 := corner[a.Lower].x+boxWide/2, corner[a.Lower].y
+		x2, y2 := corner[a.Upper].x+boxWide/2, corner[a.Upper].y+boxHigh
+		at := canvas{unit: 1, left: x1 + (x2-x1)*.36, top: y1 + (y2-y1)*.36}
+		at.text(spot{}, 11, heavy, paper, fmt.Sprint(a.Tile))
+		c.WriteString(at.String())
+	}
+	for k, p := range pictures {
+		c.add(`<rect x="%s" y="%s" width="%s" height="%s" rx="5" fill="%s" stroke="#c9ced4"/>`, decimal(corner[k].x), decimal(corner[k].y), decimal(boxWide), decimal(boxHigh), paper)
+		small := canvas{unit: unit, left: corner[k].x + pad - low.x*unit, top: corner[k].y + pad + high.y*unit}
+		small.draw(p)
+		c.WriteString(small.String())
+	}
+	return c.document(width, height, fmt.Sprintf("lattice of %d matchings", len(h.nodes))), nil
+}
+
+// arranged orders every level so that lines cross little: nodes go to the mean
+// place of their neighbours on the level before, sweeping up and down a few times.
+func (h Hasse) arranged() [][]int {
+	levels := h.levels()
+	place := make([]float64, len(h.nodes))
+	linked := make([][]int, len(h.nodes))
+	for _, a := range h.arcs {
+		linked[a.Lower] = append(linked[a.Lower], a.Upper)
+		linked[a.Upper] = append(linked[a.Upper], a.Lower)
+	}
+	settle := func(l []int) {
+		for x, k := range l {
+			place[k] = float64(x) - float64(len(l)-1)/2
+		}
+	}
+	for _, l := range levels {
+		settle(l)
+	}
+	sweep := func(y, from int) {
+		mean := map[int]float64{}
+		for _, k := range levels[y] {
+			sum, n := 0.0, 0
+			for _, o := range linked[k] {
+				if height := h.nodes[o].Height(); height == h.nodes[levels[from][0]].Height() {
+					sum += place[o]
+					n++
+				}
+			}
+			mean[k] = place[k]
+			if n > 0 {
+				mean[k] = sum / float64(n)
+			}
+		}
+		slices.SortStableFunc(levels[y], func(a, b int) int { return cmp.Compare(mean[a], mean[b]) })
+		settle(levels[y])
+	}
+	for range 6 {
+		for y := 1; y < len(levels); y++ {
+			sweep(y, y-1)
+		}
+		for y := len(levels) - 2; y >= 0; y-- {
+			sweep(y, y+1)
+		}
+	}
+	return levels
+}
