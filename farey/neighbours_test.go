@@ -53,6 +53,20 @@ func TestMediantCompletesTheTriangle(t *testing.T) {
 	})
 }
 
+func TestMediantsBesideInfinity(t *testing.T) {
+	for _, row := range [][3]string{
+		{"0/1", "1/0", "1/1"}, {"1/1", "1/0", "2/1"}, {"5/1", "1/0", "6/1"}, {"-1/1", "1/0", "-2/1"}, {"-5/1", "1/0", "-6/1"},
+		{"0/1", "1/1", "1/2"}, {"0/1", "-1/1", "-1/2"},
+		{"-100000000000000000000/1", "1/0", "-100000000000000000001/1"},
+	} {
+		for _, pair := range [][2]string{{row[0], row[1]}, {row[1], row[0]}} {
+			m, err := farey.Mediant(farey.MustParse(pair[0]), farey.MustParse(pair[1]))
+			require.NoError(t, err)
+			require.Equal(t, row[2], m.String(), pair)
+		}
+	}
+}
+
 func TestSlopeIsTheMediantOfItsParents(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		s := slopes().Draw(t, "s")

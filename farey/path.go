@@ -214,9 +214,6 @@ func (p Path) vectors() (a, b vector) {
 	return change(top), change(bottom)
 }
 
-// Equal reports whether p and r are the same path, as == does.
-func (p Path) Equal(r Path) bool { return p == r }
-
 // basePathText is the text of the path that stays at the base triangle.
 const basePathText = "base"
 

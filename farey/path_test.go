@@ -142,7 +142,7 @@ func TestPathText(t *testing.T) {
 		var back farey.Path
 		require.NoError(t, back.UnmarshalText(text))
 		require.Equal(t, p, back)
-		require.True(t, p.Equal(back))
+		require.True(t, p == back)
 		require.Equal(t, p.String(), fmt.Sprintf("%s", p))
 		require.Equal(t, p.IsBase(), p.String() == "base")
 	})

@@ -6,6 +6,8 @@ import (
 	"math"
 	"math/big"
 	"math/bits"
+
+	"example.com/onecusp/contfrac"
 )
 
 // Slope is a rational number p/q in lowest terms with q ≥ 0, or 1/0 (infinity).
@@ -28,7 +30,7 @@ type terms struct{ p, q *big.Int }
 
 // New returns the slope p/q, reduced, for integers of any sign and size; q = 0 with
 // p ≠ 0 gives 1/0. It fails with [ErrIndeterminate] for 0/0 and with [ErrNil] for a
-// nil argument. Cost: one greatest common divisor.
+// nil argument. Cost: one greatest common divisor, less than quadratic in the size.
 func New(p, q *big.Int) (Slope, error) {
 	if p == nil || q == nil {
 		return Slope{}, fmt.Errorf("farey: slope of a nil numerator or denominator: two integers would be accepted: %w", ErrNil)
@@ -36,8 +38,22 @@ func New(p, q *big.Int) (Slope, error) {
 	if fits(p) && fits(q) {
 		return FromInts(p.Int64(), q.Int64())
 	}
+	return fromCoprime(reduce(p, q)), nil
+}
+
+// reduceBits is the size in bits of the lesser of two integers from which reduce
+// takes their continued fraction rather than their greatest common divisor, which in
+// math/big is quadratic; see BenchmarkReduce.
+var reduceBits = 50_000
+
+// reduce returns p/q, not 0/0, in lowest terms, of any sign.
+func reduce(p, q *big.Int) (num, den *big.Int) {
+	if min(p.BitLen(), q.BitLen()) >= reduceBits {
+		fraction, _ := contfrac.FromRatio(p, q) // fails for 0/0 only
+		return fraction.Ratio()
+	}
 	g := new(big.Int).GCD(nil, nil, new(big.Int).Abs(p), new(big.Int).Abs(q))
-	return fromCoprime(new(big.Int).Quo(p, g), new(big.Int).Quo(q, g)), nil
+	return new(big.Int).Quo(p, g), new(big.Int).Quo(q, g)
 }
 
 // FromInts is [New] for machine integers. It fails with [ErrIndeterminate] for 0/0.
@@ -46,9 +62,7 @@ func FromInts(p, q int64) (Slope, error) {
 		return Slope{}, fmt.Errorf("farey: slope 0/0: a numerator or denominator other than 0 would be accepted: %w", ErrIndeterminate)
 	}
 	if p == math.MinInt64 || q == math.MinInt64 {
-		a, b := big.NewInt(p), big.NewInt(q)
-		g := new(big.Int).GCD(nil, nil, new(big.Int).Abs(a), new(big.Int).Abs(b))
-		return fromCoprime(a.Quo(a, g), b.Quo(b, g)), nil
+		return fromCoprime(reduce(big.NewInt(p), big.NewInt(q))), nil
 	}
 	a, b := abs(p), abs(q)
 	for b != 0 {

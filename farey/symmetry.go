@@ -41,12 +41,13 @@ func (g Symmetry) Triangle(t Triangle) Triangle {
 func (g Symmetry) Then(h Symmetry) Symmetry {
 	// A symmetry is known by what it does to two of the classes.
 	zero, infinity := h.Class(g.Class(Zero)), h.Class(g.Class(Infinity))
+	var product Symmetry
 	for _, k := range Symmetries() {
 		if k.Class(Zero) == zero && k.Class(Infinity) == infinity {
-			return k
+			product = k
 		}
 	}
-	return Symmetry{}
+	return product
 }
 
 // Inverse returns the map that undoes g.

@@ -18,9 +18,10 @@ const minusSign = "−"
 
 // Parse reads a slope from an optional sign (+, - or the minus sign U+2212), decimal
 // digits and, optionally, a slash and more digits: "3/7", "-3/4", "1/0", "5". The
-// fraction is reduced and leading zeros are dropped: "2/4" is 1/2. It fails with
+// fraction is reduced and leading zeros are dropped: "2/4" is 1/2, and "-1/0" is 1/0,
+// which has no sign. It fails with
 // [ErrTooLarge] past [MaxTextLen] bytes, with [ErrIndeterminate] for 0/0 and with
-// [ErrSyntax] for anything else.
+// [ErrSyntax] for anything else. Cost: less than quadratic in the length.
 func Parse(s string) (Slope, error) {
 	if len(s) > MaxTextLen {
 		return Slope{}, fmt.Errorf("farey: slope %s of %d bytes: up to %d would be accepted: %w", quote(s), len(s), MaxTextLen, ErrTooLarge)
@@ -48,8 +49,7 @@ func Parse(s string) (Slope, error) {
 		}
 		return FromInts(p, q)
 	}
-	a, _ := new(big.Int).SetString(num, 10)
-	b, _ := new(big.Int).SetString(den, 10)
+	a, b := integer(num), integer(den)
 	if negative {
 		a.Neg(a)
 	}
@@ -72,6 +72,17 @@ func isDigits(s string) bool {
 		}
 	}
 	return s != ""
+}
+
+// integer returns the value of at most MaxTextLen decimal digits. The text reader of
+// contfrac does it in less than quadratic time, unlike that of math/big.
+func integer(digits string) *big.Int {
+	digits = strings.TrimLeft(digits, "0")
+	if digits == "" {
+		return new(big.Int)
+	}
+	fraction, _ := contfrac.ParseFraction("[" + digits + "]") // reads that many digits
+	return fraction.Numerator()
 }
 
 // String returns the slope whole, as "3/7", "-3/4", "5/1" or "1/0".
