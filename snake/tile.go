@@ -80,6 +80,17 @@ func (g Graph) Edges() iter.Seq[Side] {
 	return t.edges()
 }
 
+// Edges yields the edges of the band, 3n for n tiles, each once; the glue
+// between the last tile and the first belongs to the last. It can be run again. A band of more than
+// [MaxTiles] tiles yields nothing.
+func (b Band) Edges() iter.Seq[Side] {
+	t, err := b.Set()
+	if err != nil {
+		return func(func(Side) bool) {}
+	}
+	return t.edges()
+}
+
 // edges yields the edges of the set's graph, each once.
 func (t Set) edges() iter.Seq[Side] {
 	return func(yield func(Side) bool) {
