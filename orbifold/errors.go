@@ -4,6 +4,8 @@ import (
 	"errors"
 	"fmt"
 	"math/big"
+
+	"example.com/onecusp/farey"
 )
 
 var (
@@ -12,8 +14,9 @@ var (
 
 	// ErrTooLarge reports a result that would not fit: a number with more bits
 	// than the family's limit, a word or a graph longer than this package
-	// builds, a logarithm that leaves the range of float64.
-	ErrTooLarge = errors.New("result too large to hold")
+	// builds, a logarithm that leaves the range of float64. It is the same
+	// value in contfrac, farey and here.
+	ErrTooLarge = farey.ErrTooLarge
 
 	// ErrNoCrossing reports a question about the word of an arc that crosses
 	// nothing: the arcs at 0/1, 1/0 and 1/1 are edges of the triangulation and

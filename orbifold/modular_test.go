@@ -28,6 +28,23 @@ func TestNumberModIsPlainSteppingModulo(t *testing.T) {
 	})
 }
 
+func TestRunsOfAMillionAreSteppingModuloPrimes(t *testing.T) {
+	for _, f := range []orbifold.Family{{}, orbifold.MustNew(1, 2, 3)} {
+		for _, text := range []string{"1/1000000", "-1000000/1", "1000003/1000002", "3/3000007"} {
+			s := farey.MustParse(text)
+			n := must(f.Number(s))(t)
+			for i, p := range orbifold.Primes() {
+				m := new(big.Int).SetUint64(p)
+				got := must(f.NumberMod(s, m))(t)
+				assertEqualInt(t, new(big.Int).Mod(n, m), got, "exact number of %v at %v modulo %v", f, s, m)
+				if i == 0 {
+					assertEqualInt(t, plainNumberMod(f, s, m), got, "%v at %v modulo %v", f, s, m)
+				}
+			}
+		}
+	}
+}
+
 func TestRootModIsTheMatrixReduced(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		f, s, m := families().Draw(t, "family"), slopes().Draw(t, "slope"), moduli().Draw(t, "m")

@@ -1,0 +1,244 @@
+package orbifold_test
+
+import (
+	"context"
+	"math/big"
+	"slices"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+	"pgregory.net/rapid"
+
+	"example.com/onecusp/farey"
+	"example.com/onecusp/orbifold"
+)
+
+var allClasses = []farey.Class{farey.Zero, farey.Infinity, farey.One}
+
+func TestTripleOfATriangleIsThatOfPlainFlips(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f, s := families().Draw(t, "family"), slopes().Draw(t, "slope")
+		tr := must(f.Triple(s.Path().Triangle()))(t)
+		want, _ := plainTriple(f, s.Path())
+		for _, c := range allClasses {
+			assertEqualInt(t, want[c], tr.At(c))
+		}
+		again := must(f.NewTriple(tr.Numbers()))(t)
+		assert.True(t, again.Equal(tr))
+		sorted := tr.Sorted()
+		assert.True(t, slices.IsSortedFunc(sorted[:], (*big.Int).Cmp))
+	})
+}
+
+func TestDescentOfASolutionFindsItsPath(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f, s := families().Draw(t, "family"), slopes().Draw(t, "slope")
+		p := s.Path()
+		tr := must(f.NewTriple(must(f.Triple(p.Triangle()))(t).Numbers()))(t)
+		assert.Equal(t, p, tr.Path())
+		assert.True(t, tr.Triangle().Equal(p.Triangle()))
+		parent, ok := tr.Parent()
+		assert.Equal(t, !p.IsBase(), ok)
+		if newest, has := p.Triangle().Newest(); has {
+			largest, _ := tr.Largest()
+			assert.Equal(t, newest, largest)
+			assert.True(t, parent.Flip(newest).Equal(tr))
+		}
+	})
+}
+
+func TestTriplesThatSolveNothingAreRefused(t *testing.T) {
+	f := orbifold.MustNew(2, 0, 1)
+	rapid.Check(t, func(t *rapid.T) {
+		s := slopes().Draw(t, "slope")
+		c := rapid.SampledFrom(allClasses).Draw(t, "class")
+		n := [3]*big.Int{}
+		tr := must(f.Triple(s.Path().Triangle()))(t)
+		for _, d := range allClasses {
+			n[d] = tr.At(d)
+		}
+		// For given other two numbers (E) has the two roots u and u'.
+		other := tr.Flip(c).At(c)
+		n[c].Add(n[c], big.NewInt(rapid.Int64Range(1, 1_000_000).Draw(t, "shift")))
+		if n[c].Cmp(other) == 0 {
+			return
+		}
+		_, err := f.NewTriple(n[0], n[1], n[2])
+		assert.ErrorIs(t, err, orbifold.ErrNotSolution)
+	})
+	for _, bad := range []*big.Int{nil, new(big.Int), big.NewInt(-1)} {
+		_, err := f.NewTriple(big.NewInt(1), bad, big.NewInt(1))
+		assert.ErrorIs(t, err, orbifold.ErrNotPositive)
+	}
+	// Weights in another order are another equation.
+	tr := must(f.Triple(farey.MustParse("3/7").Path().Triangle()))(t)
+	_, err := orbifold.MustNew(0, 2, 1).NewTriple(tr.Numbers())
+	assert.ErrorIs(t, err, orbifold.ErrNotSolution)
+}
+
+func TestTreeVisitsEverySlopeOnce(t *testing.T) {
+	f := orbifold.MustNew(1, 0, 2)
+	for depth := -1; depth <= 7; depth++ {
+		seen := map[farey.Key]bool{}
+		for n := range f.Tree(depth) {
+			assert.False(t, seen[n.Slope().Key()], "%v twice", n.Slope())
+			seen[n.Slope().Key()] = true
+			assertEqualInt(t, must(f.Number(n.Slope()))(t), n.Number())
+			moves := n.Slope().Path()
+			want := 0
+			if !moves.IsBase() {
+				want = 1 + int(moves.Moves().Len().Int64())
+			}
+			assert.Equal(t, want, n.Depth())
+			assert.True(t, n.Triple().Equal(must(f.Triple(n.Slope().Path().Triangle()))(t)))
+			a, b, ok := n.Parents()
+			assert.Equal(t, !n.Slope().IsBase(), ok)
+			if ok {
+				x, y, err := n.Slope().Parents()
+				require.NoError(t, err)
+				assert.ElementsMatch(t, []farey.Key{x.Key(), y.Key()}, []farey.Key{a.Key(), b.Key()})
+			}
+		}
+		want := 0
+		if depth >= 0 {
+			want = 3 << depth
+		}
+		assert.Len(t, seen, want)
+	}
+}
+
+func TestWithinIsEverySlopeOfABoxUpToTheBound(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := families().Draw(t, "family")
+		bound := big.NewInt(rapid.Int64Range(-1, 3000).Draw(t, "bound"))
+		got := map[farey.Key]bool{}
+		for n := range f.Within(bound) {
+			assert.False(t, got[n.Slope().Key()])
+			got[n.Slope().Key()] = true
+		}
+		// N ≥ 2^(depth) and more: numbers up to 3000 sit at |p|, q ≤ 12 or are arcs
+		// of a fan of a base slope, which grow by 2.6 a step at least.
+		want := 0
+		for s := range must(farey.Box(12, 12))(t) {
+			if must(f.Number(s))(t).Cmp(bound) <= 0 {
+				want++
+				assert.True(t, got[s.Key()], "%v is missing", s)
+			}
+		}
+		assert.Len(t, got, want)
+	})
+}
+
+func TestAscendingIsTheSortedWalkOfTheDomain(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := families().Draw(t, "family")
+		bound := big.NewInt(20_000)
+		var want []orbifold.Node
+		for n := range f.Within(bound) {
+			if f.Representative(n.Slope()).Equal(n.Slope()) {
+				want = append(want, n)
+			}
+		}
+		slices.SortFunc(want, func(a, b orbifold.Node) int {
+			if c := a.Number().Cmp(b.Number()); c != 0 {
+				return c
+			}
+			return a.Slope().Cmp(b.Slope())
+		})
+		i := 0
+		for n := range f.Ascending() {
+			if n.Number().Cmp(bound) > 0 {
+				break
+			}
+			require.Less(t, i, len(want), "%v is too much", n.Slope())
+			require.True(t, want[i].Slope().Equal(n.Slope()), "place %d: want %v, got %v", i, want[i].Slope(), n.Slope())
+			assertEqualInt(t, want[i].Number(), n.Number())
+			i++
+		}
+		assert.Len(t, want, i)
+	})
+}
+
+func TestIdentifyFindsTheSlopeOfANumber(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := families().Draw(t, "family")
+		s := slopesOn(paths(4, 1, 2, 3)).Draw(t, "slope")
+		found, err := f.Identify(context.Background(), must(f.Number(s))(t))
+		require.NoError(t, err)
+		assert.Contains(t, keys(found), f.Representative(s).Key())
+		for i, u := range found {
+			assert.True(t, f.Representative(u).Equal(u))
+			assert.True(t, i == 0 || found[i-1].Cmp(u) < 0)
+		}
+	})
+}
+
+func TestIdentifyIsComplete(t *testing.T) {
+	for _, f := range []orbifold.Family{{}, orbifold.MustNew(1, 1, 1), orbifold.MustNew(2, 0, 1), orbifold.MustNew(3, 0, 0), orbifold.MustNew(0, 0, 2)} {
+		const most = 2000
+		want := map[int64]map[farey.Key]bool{}
+		for s := range must(farey.Box(20, 20))(t) {
+			if n := must(f.Number(s))(t); n.Cmp(big.NewInt(most)) <= 0 {
+				if want[n.Int64()] == nil {
+					want[n.Int64()] = map[farey.Key]bool{}
+				}
+				want[n.Int64()][f.Representative(s).Key()] = true
+			}
+		}
+		for n := int64(1); n <= most; n++ {
+			found, err := f.Identify(context.Background(), big.NewInt(n))
+			require.NoError(t, err)
+			got := map[farey.Key]bool{}
+			for _, s := range found {
+				got[s.Key()] = true
+			}
+			require.Len(t, got, len(found))
+			if len(want[n]) == 0 {
+				require.Empty(t, got, "%d in %v", n, f)
+			} else {
+				require.Equal(t, want[n], got, "%d in %v", n, f)
+			}
+		}
+	}
+}
+
+func TestInequivalentSlopesWithEqualNumbers(t *testing.T) {
+	// Found by exhaustive search with a slow model: (3,0,0) has 5 at 2, −1/2 and
+	// 1/3; (2,0,1) has 81 at 2/5 and 4/3, 4489 at −4/3 and 6/7.
+	for _, fact := range []struct {
+		family string
+		number int64
+		slopes []string
+	}{
+		{"3,0,0", 5, []string{"2/1", "-1/2", "1/3"}},
+		{"2,0,1", 81, []string{"2/5", "4/3"}},
+		{"2,0,1", 4489, []string{"-4/3", "6/7"}},
+	} {
+		f := must(orbifold.Parse(fact.family))(t)
+		found, err := f.Identify(context.Background(), big.NewInt(fact.number))
+		require.NoError(t, err)
+		classes := map[farey.Key]bool{}
+		for _, text := range fact.slopes {
+			s := farey.MustParse(text)
+			assert.Contains(t, keys(found), f.Representative(s).Key(), "%d at %s", fact.number, text)
+			classes[f.Representative(s).Key()] = true
+			assert.Zero(t, must(f.Compare(s, farey.MustParse(fact.slopes[0])))(t))
+		}
+		assert.GreaterOrEqual(t, len(classes), 2, "they are inequivalent")
+	}
+}
+
+func TestIdentifyRefusesWhatIsNoNumber(t *testing.T) {
+	for _, n := range []*big.Int{nil, new(big.Int), big.NewInt(-5)} {
+		_, err := orbifold.Family{}.Identify(context.Background(), n)
+		assert.ErrorIs(t, err, orbifold.ErrNotPositive)
+	}
+}
+
+func keys(slopes []farey.Slope) (k []farey.Key) {
+	for _, s := range slopes {
+		k = append(k, s.Key())
+	}
+	return k
+}
