@@ -30,7 +30,7 @@ const (
 	MaxPlainLetters = 1 << 20
 	// MaxTerms bounds the terms of a minus continued fraction made from a
 	// regular one, where one large term becomes many.
-	MaxTerms = 1 << 25
+	MaxTerms = 1 << 24
 	// MaxBits bounds the entries of a matrix power, in bits.
 	MaxBits = 1 << 30
 )

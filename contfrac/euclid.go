@@ -36,13 +36,24 @@ func FromRatio(p, q *big.Int) (Fraction, error) {
 
 // euclid returns the quotients of the Euclidean algorithm on p and q ≥ 0.
 func euclid(p, q *big.Int) Fraction {
-	var b termBuilder
-	x, y := new(big.Int).Set(p), new(big.Int).Set(q)
-	for y.Sign() != 0 {
-		t, r := new(big.Int), new(big.Int)
-		t.DivMod(x, y, r)
-		b.push(t)
-		x, y = y, r
+	var e expansion
+	if q.Sign() == 0 {
+		return Fraction{}
 	}
-	return b.fraction()
+	x, y := q, new(big.Int)
+	t := new(big.Int)
+	t.DivMod(p, q, y)
+	e.push(t)
+	for y.Sign() != 0 {
+		n := x.BitLen()
+		if n <= lehmerBits {
+			e.lehmer(x, y, 0, false)
+			break
+		}
+		before := e.n
+		if x, y, _ = e.halfway(x, y, n/2, false); e.n == before {
+			x, y, t = e.divide(x, y)
+		}
+	}
+	return e.fraction()
 }

@@ -24,26 +24,14 @@ type Fraction struct {
 // NewFraction returns the fraction with the given terms. A nil term, or a
 // term after the first that is less than 1, gives ErrTerm.
 func NewFraction(terms ...*big.Int) (Fraction, error) {
-	var b termBuilder
-	for i, t := range terms {
-		if t == nil || i > 0 && t.Sign() <= 0 {
-			return Fraction{}, fmt.Errorf("contfrac: term %d of a fraction is %s: any integer first and then integers of at least 1 are accepted: %w", i, describe(t), ErrTerm)
-		}
-		b.push(t)
-	}
-	return b.fraction(), nil
+	b, err := regular.build(terms)
+	return b.fraction(), err
 }
 
 // FractionOf is NewFraction for small terms.
 func FractionOf(terms ...int64) (Fraction, error) {
-	var b termBuilder
-	for i, t := range terms {
-		if i > 0 && t <= 0 {
-			return Fraction{}, fmt.Errorf("contfrac: term %d of a fraction is %d: any integer first and then integers of at least 1 are accepted: %w", i, t, ErrTerm)
-		}
-		b.push(big.NewInt(t))
-	}
-	return b.fraction(), nil
+	b, err := regular.buildSmall(terms)
+	return b.fraction(), err
 }
 
 // Len returns the number of terms.
@@ -194,41 +182,4 @@ func (f Fraction) builder(n int) *termBuilder {
 		data = data[:packedStart(data, len(data))]
 	}
 	return &termBuilder{n: n, neg: f.neg, buf: append(make([]byte, 0, len(data)+10), data...)}
-}
-
-// termBuilder is a stack of terms, of which the first alone may be negative.
-type termBuilder struct {
-	n   int
-	neg bool
-	buf []byte
-}
-
-func (b *termBuilder) push(t *big.Int) {
-	if b.n == 0 {
-		b.neg = t.Sign() < 0
-	}
-	b.buf = appendPackedBig(b.buf, t)
-	b.n++
-}
-
-func (b *termBuilder) pushUint(t uint64) {
-	b.buf = appendPacked(b.buf, t)
-	b.n++
-}
-
-// pop removes the last term, of which there must be one, and returns it.
-func (b *termBuilder) pop() *big.Int {
-	at := packedStart(b.buf, len(b.buf))
-	t := packedBig(b.buf[at:])
-	b.buf = b.buf[:at]
-	b.n--
-	if b.n == 0 && b.neg {
-		b.neg = false
-		t.Neg(t)
-	}
-	return t
-}
-
-func (b *termBuilder) fraction() Fraction {
-	return Fraction{n: b.n, neg: b.neg, data: string(b.buf)}
 }

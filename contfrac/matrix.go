@@ -11,13 +11,6 @@ type Matrix struct {
 	e *entries // nil for the identity
 }
 
-// entries is [[a, b], [c, d]].
-type entries struct{ a, b, c, d *big.Int }
-
-func identity() entries {
-	return entries{big.NewInt(1), new(big.Int), new(big.Int), big.NewInt(1)}
-}
-
 func matrixOf(a, b, c, d int64) Matrix {
 	return Matrix{e: &entries{big.NewInt(a), big.NewInt(b), big.NewInt(c), big.NewInt(d)}}
 }
@@ -65,13 +58,6 @@ func (m Matrix) Mul(n Matrix) Matrix {
 	return Matrix{e: &p}
 }
 
-func (m entries) mul(n entries) entries {
-	return entries{
-		dot(m.a, n.a, m.b, n.c), dot(m.a, n.b, m.b, n.d),
-		dot(m.c, n.a, m.d, n.c), dot(m.c, n.b, m.d, n.d),
-	}
-}
-
 // Trace returns A + D.
 func (m Matrix) Trace() *big.Int {
 	e := m.entries()
@@ -115,8 +101,9 @@ func (m Matrix) Inverse() (Matrix, error) {
 
 // Pow returns the n-th power; for n < 0 that of the inverse, so that the
 // determinant must then be 1 or −1 (ErrDeterminant). A power with entries of
-// more than MaxBits bits, as far as the factors show it, gives ErrTooLarge
-// before it is made. It costs about two squarings of the result.
+// more than MaxBits bits gives ErrTooLarge before it is made: almost always
+// at once, by a bound from the trace, and otherwise by the size of the factors of the
+// next product. It costs about two squarings of the result.
 func (m Matrix) Pow(n int64) (Matrix, error) {
 	k := uint64(n)
 	if n < 0 {
@@ -128,6 +115,11 @@ func (m Matrix) Pow(n int64) (Matrix, error) {
 	}
 	var power Matrix
 	for square := m; ; {
+		// The spectral radius ρ of the square has |trace| ≤ 2ρ, and the largest
+		// entry of its k-th power is at least ρᵏ/2.
+		if t := square.Trace().BitLen() - 2; t > 0 && k > uint64(powerBits+1)/uint64(t) {
+			return Matrix{}, fmt.Errorf("contfrac: power %d of a matrix: entries of at most %d bits are accepted: %w", n, powerBits, ErrTooLarge)
+		}
 		var err error
 		if k&1 == 1 {
 			if power, err = power.mulBounded(square); err != nil {
@@ -143,10 +135,13 @@ func (m Matrix) Pow(n int64) (Matrix, error) {
 	}
 }
 
-// mulBounded is Mul, refused when the result may pass MaxBits.
+// powerBits is MaxBits, except in tests.
+var powerBits int64 = MaxBits
+
+// mulBounded is Mul, refused when the result may pass powerBits.
 func (m Matrix) mulBounded(n Matrix) (Matrix, error) {
-	if size := m.bits() + n.bits() + 1; size > MaxBits {
-		return Matrix{}, fmt.Errorf("entries of about %d bits: at most %d are accepted: %w", size, int64(MaxBits), ErrTooLarge)
+	if size := m.bits() + n.bits() + 1; size > powerBits {
+		return Matrix{}, fmt.Errorf("entries of about %d bits: at most %d are accepted: %w", size, powerBits, ErrTooLarge)
 	}
 	return m.Mul(n), nil
 }

@@ -1,7 +1,6 @@
 package contfrac
 
 import (
-	"encoding/json"
 	"fmt"
 	"math/big"
 	"strings"
@@ -41,7 +40,15 @@ func (m *Matrix) UnmarshalText(text []byte) error {
 	if !opened || !closed || !middle || !first || !second {
 		return bad
 	}
-	return m.set(a, b, c, d)
+	var n [4]*big.Int
+	for i, entry := range []string{a, b, c, d} {
+		var err error
+		if n[i], err = decimal(entry); err != nil {
+			return fmt.Errorf("contfrac: matrix %s, entry %d: %w", quote(string(text)), i+1, err)
+		}
+	}
+	*m = Matrix{e: &entries{n[0], n[1], n[2], n[3]}}
+	return nil
 }
 
 // MarshalJSON implements json.Marshaler: the rows as arrays of decimal
@@ -57,22 +64,28 @@ func (m *Matrix) UnmarshalJSON(text []byte) error {
 	if err := checkText("matrix in JSON", len(text)); err != nil {
 		return err
 	}
-	var rows [][]string
-	if err := json.Unmarshal(text, &rows); err != nil || len(rows) != 2 || len(rows[0]) != 2 || len(rows[1]) != 2 {
-		return fmt.Errorf(`contfrac: matrix in JSON %s: the form [["1","2"],["3","5"]] is accepted: %w`, quote(string(text)), ErrSyntax)
-	}
-	return m.set(rows[0][0], rows[0][1], rows[1][0], rows[1][1])
-}
-
-// set reads the four entries, and sets m only if all are good.
-func (m *Matrix) set(texts ...string) error {
+	s := jsonScanner{text: text}
 	var n [4]*big.Int
-	for i, s := range texts {
-		var err error
-		if n[i], err = decimal(s); err != nil {
-			return fmt.Errorf("contfrac: matrix entry %d: %w", i+1, err)
+	for i, before := range []string{"[[", ",", "],[", ","} {
+		good := true
+		for _, c := range []byte(before) {
+			good = good && s.take(c)
 		}
+		if !good {
+			return badMatrixJSON(text)
+		}
+		var err error
+		if n[i], err = s.integer(); err != nil {
+			return fmt.Errorf("contfrac: matrix in JSON, entry %d: %w", i+1, err)
+		}
+	}
+	if !s.take(']') || !s.take(']') || !s.atEnd() {
+		return badMatrixJSON(text)
 	}
 	*m = Matrix{e: &entries{n[0], n[1], n[2], n[3]}}
 	return nil
+}
+
+func badMatrixJSON(text []byte) error {
+	return fmt.Errorf(`contfrac: matrix in JSON %s: the form [["1","2"],["3","5"]] is accepted: %w`, quote(string(text)), ErrSyntax)
 }

@@ -23,26 +23,15 @@ type Minus struct {
 // NewMinus returns the minus continued fraction with the given terms. A nil term,
 // or a term after the first that is less than 2, gives ErrTerm.
 func NewMinus(terms ...*big.Int) (Minus, error) {
-	var b termBuilder
-	for i, t := range terms {
-		if t == nil || i > 0 && t.Cmp(twoInt) < 0 {
-			return Minus{}, fmt.Errorf("contfrac: term %d of a minus continued fraction is %s: any integer first and then integers of at least 2 are accepted: %w", i, describe(t), ErrTerm)
-		}
-		b.push(t)
-	}
-	return b.minus(), nil
+	b, err := minus.build(terms)
+	return b.minus(), err
 }
 
 // MinusOf is NewMinus for small terms.
 func MinusOf(terms ...int64) (Minus, error) {
-	integers := make([]*big.Int, len(terms))
-	for i, t := range terms {
-		integers[i] = big.NewInt(t)
-	}
-	return NewMinus(integers...)
+	b, err := minus.buildSmall(terms)
+	return b.minus(), err
 }
-
-var twoInt = big.NewInt(2)
 
 func (b *termBuilder) minus() Minus {
 	return Minus{n: b.n, neg: b.neg, data: string(b.buf)}
@@ -89,7 +78,7 @@ func (f Fraction) Minus() (Minus, error) {
 	for i, a := range f.All() {
 		if i%2 == 1 {
 			for range a.Int64() - 1 {
-				b.push(twoInt)
+				b.pushUint(2)
 			}
 			continue
 		}
@@ -109,12 +98,19 @@ func (f Fraction) Minus() (Minus, error) {
 func (m Minus) Fraction() Fraction {
 	var b termBuilder
 	var twos uint64
-	for i, t := range m.All() {
-		switch {
-		case i > 0 && t.Cmp(twoInt) == 0:
+	for i, at := 0, 0; at < len(m.data); i++ {
+		end := packedEnd(m.data, at)
+		packed := m.data[at:end]
+		at = end
+		if i > 0 && packed == "\x02" {
 			twos++
 			continue
-		case i > 0:
+		}
+		t := packedBig(packed)
+		if i == 0 && m.neg {
+			t.Neg(t)
+		}
+		if i > 0 {
 			b.pushUint(twos + 1)
 			twos = 0
 			t.Sub(t, oneInt)
@@ -136,67 +132,3 @@ func (m Minus) Ratio() (num, den *big.Int) { return m.Fraction().Ratio() }
 
 // Rat returns the value; no terms give ErrInfinite.
 func (m Minus) Rat() (*big.Rat, error) { return m.Fraction().Rat() }
-
-// ParseMinus reads a minus continued fraction in the form "[[2; 3, 4]]";
-// white space is free between the tokens, and "[[]]" has no terms. Errors are
-// those of ParseFraction.
-func ParseMinus(s string) (Minus, error) {
-	terms, err := parseTerms("minus continued fraction", s, "[[", "]]")
-	if err != nil {
-		return Minus{}, err
-	}
-	return NewMinus(terms...)
-}
-
-// String returns the text that ParseMinus reads: "[[2; 3, 4]]", "[[2]]", "[[]]".
-func (m Minus) String() string {
-	return string(appendTerms(nil, m.neg, m.data, "[[", "]]"))
-}
-
-// Format implements fmt.Formatter: %s (and %q, quoted) writes all the terms, and %v writes
-// the first and last ones and their number when there are many, long terms shortened.
-func (m Minus) Format(s fmt.State, verb rune) {
-	format(s, verb, "contfrac.Minus", m.String, func() string {
-		return shortenTerms(m.n, m.neg, m.data, "[[", "]]")
-	})
-}
-
-// MarshalText implements encoding.TextMarshaler with the text of String.
-func (m Minus) MarshalText() ([]byte, error) {
-	return appendTerms(nil, m.neg, m.data, "[[", "]]"), nil
-}
-
-// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what
-// MarshalText writes, within MaxText and MaxDigits.
-func (m *Minus) UnmarshalText(text []byte) error {
-	n, err := ParseMinus(string(text))
-	if err != nil {
-		return err
-	}
-	if err := sameText("minus continued fraction", text, n.String()); err != nil {
-		return err
-	}
-	*m = n
-	return nil
-}
-
-// MarshalJSON implements json.Marshaler: the array of the terms as decimal
-// strings, ["2","3","4"].
-func (m Minus) MarshalJSON() ([]byte, error) {
-	return appendStrings(nil, m.neg, m.data), nil
-}
-
-// UnmarshalJSON implements json.Unmarshaler. It accepts what MarshalJSON
-// writes, with any white space between tokens, within MaxText and MaxDigits.
-func (m *Minus) UnmarshalJSON(text []byte) error {
-	terms, err := unmarshalTerms("minus continued fraction", text)
-	if err != nil {
-		return err
-	}
-	n, err := NewMinus(terms...)
-	if err != nil {
-		return err
-	}
-	*m = n
-	return nil
-}

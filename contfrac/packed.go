@@ -1,9 +1,6 @@
 package contfrac
 
-import (
-	"math/big"
-	"math/bits"
-)
+import "math/big"
 
 // A packed sequence is a string of non-negative integers, seven bits to a
 // byte, low bits first, every byte of a number but its last with the top bit
@@ -36,7 +33,7 @@ func appendPackedBig(buf []byte, n *big.Int) []byte {
 	for _, w := range n.Bits() {
 		// A word is taken in halves of at most 32 bits, so that acc, which
 		// holds fewer than 7 bits before, never overflows.
-		for part := 0; part < bits.UintSize; part += 32 {
+		for part := 0; part < wordBits; part += 32 {
 			acc |= (uint64(w) >> part & 0xffffffff) << have
 			have += 32
 			for have >= 7 {
@@ -88,15 +85,15 @@ func packedBig[S string | []byte](s S) *big.Int {
 	if n, ok := packedUint(s); ok {
 		return new(big.Int).SetUint64(n)
 	}
-	words := make([]big.Word, 0, len(s)*7/bits.UintSize+1)
+	words := make([]big.Word, 0, len(s)*7/wordBits+1)
 	var acc, have uint
 	for i := 0; i < len(s); i++ {
 		v := uint(s[i] & packedMask)
 		acc |= v << have
 		have += 7
-		if have >= bits.UintSize {
+		if have >= wordBits {
 			words = append(words, big.Word(acc))
-			have -= bits.UintSize
+			have -= wordBits
 			acc = v >> (7 - have)
 		}
 	}

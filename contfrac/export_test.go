@@ -1,0 +1,33 @@
+package contfrac
+
+import "math"
+
+// Thresholds are the sizes at which one algorithm takes over from another.
+type Thresholds struct {
+	Product, Square, Seven, WordLeaves, Lehmer, FromDigits int
+	Fork                                                   int64
+}
+
+// Minimal sends everything that can go there to the algorithms for large sizes.
+var Minimal = Thresholds{0, 0, 0, 1, 0, 1, 0}
+
+// Infinite sends everything to the algorithms for small sizes.
+var Infinite = Thresholds{math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt64}
+
+// SetThresholds sets the thresholds and returns those that it replaces.
+func SetThresholds(t Thresholds) Thresholds {
+	old := Thresholds{productThreshold, squareThreshold, sevenThreshold, wordLeaves, lehmerBits, fromDigitsSize, forkBits}
+	productThreshold, squareThreshold, sevenThreshold, wordLeaves = t.Product, t.Square, t.Seven, t.WordLeaves
+	lehmerBits, fromDigitsSize, forkBits = t.Lehmer, t.FromDigits, t.Fork
+	return old
+}
+
+// FromDigits is fromDigits.
+var FromDigits = fromDigits
+
+// SetPowerBits sets the limit of Matrix.Pow and returns the one before.
+func SetPowerBits(n int64) int64 {
+	old := powerBits
+	powerBits = n
+	return old
+}
