@@ -16,6 +16,7 @@ import (
 type ring[T any] interface {
 	snake.Semiring[T]
 	Sub(x, y T) T
+	MulSub(x, y, z T) T // x·y − z
 	From(x *big.Int) T
 	IsZero(x T) bool
 }
@@ -32,10 +33,12 @@ type rule[T any] struct {
 	family Family
 	k      T    // K
 	weight [3]T // by class
+
+	jumpLength uint64 // see the variable of that name
 }
 
-func newRule[T any](f Family, r ring[T]) rule[T] {
-	x := rule[T]{ring: r, family: f, k: r.From(f.K())}
+func newRule[T any](f Family, r ring[T], jumpLength uint64) rule[T] {
+	x := rule[T]{ring: r, family: f, k: r.From(f.K()), jumpLength: jumpLength}
 	for _, c := range classes {
 		x.weight[c] = r.From(big.NewInt(f.weights[c]))
 	}
@@ -52,18 +55,18 @@ func (x rule[T]) base() (b [3]vertex[T]) {
 
 // trace returns t = K·N − k for the arc v.
 func (x rule[T]) trace(v vertex[T]) T {
-	return x.Sub(x.Mul(x.k, v.number), x.weight[v.class])
+	return x.MulSub(x.k, v.number, x.weight[v.class])
 }
 
 // flip returns the arc that replaces c in the triangle a, b, c, by the second
 // form of (X): c' = K·a·b − k_a·b − k_b·a − c, wherein K·a − k_a is the trace
 // at a.
 func (x rule[T]) flip(a, b, c vertex[T]) vertex[T] {
-	n := x.Mul(x.trace(a), b.number)
+	less := c.number
 	if w := x.weight[b.class]; !x.IsZero(w) {
-		n = x.Sub(n, x.Mul(w, a.number))
+		less = x.Add(less, x.Mul(w, a.number))
 	}
-	return vertex[T]{x.Sub(n, c.number), c.class}
+	return vertex[T]{x.MulSub(x.trace(a), b.number, less), c.class}
 }
 
 // integers is the ring Z.
@@ -75,16 +78,29 @@ func (integers) From(x *big.Int) *big.Int   { return x }
 func (integers) Add(x, y *big.Int) *big.Int { return new(big.Int).Add(x, y) }
 func (integers) Sub(x, y *big.Int) *big.Int { return new(big.Int).Sub(x, y) }
 func (integers) Mul(x, y *big.Int) *big.Int { return contfrac.Product(x, y) }
-func (integers) IsZero(x *big.Int) bool     { return x.Sign() == 0 }
+func (integers) MulSub(x, y, z *big.Int) *big.Int {
+	p := contfrac.Product(x, y) // fresh
+	return p.Sub(p, z)
+}
 
-// residues is the ring Z/m, with representatives 0 … m−1.
-type residues struct{ m *big.Int }
+func (integers) IsZero(x *big.Int) bool { return x.Sign() == 0 }
 
-func (residues) Zero() *big.Int             { return new(big.Int) }
-func (r residues) One() *big.Int            { return r.From(big.NewInt(1)) }
-func (r residues) From(x *big.Int) *big.Int { return new(big.Int).Mod(x, r.m) }
+// residues is the ring Z/m, with representatives 0 … m−1. It keeps scratch
+// space for products, so one descent has one of its own.
+type residues struct {
+	m                 *big.Int
+	product, quotient *big.Int
+}
 
-func (r residues) Add(x, y *big.Int) *big.Int {
+func newResidues(m *big.Int) *residues {
+	return &residues{new(big.Int).Set(m), new(big.Int), new(big.Int)}
+}
+
+func (r *residues) From(x *big.Int) *big.Int { return new(big.Int).Mod(x, r.m) }
+func (r *residues) Zero() *big.Int           { return new(big.Int) }
+func (r *residues) One() *big.Int            { return r.From(big.NewInt(1)) }
+
+func (r *residues) Add(x, y *big.Int) *big.Int {
 	z := new(big.Int).Add(x, y)
 	if z.Cmp(r.m) >= 0 {
 		z.Sub(z, r.m)
@@ -92,7 +108,7 @@ func (r residues) Add(x, y *big.Int) *big.Int {
 	return z
 }
 
-func (r residues) Sub(x, y *big.Int) *big.Int {
+func (r *residues) Sub(x, y *big.Int) *big.Int {
 	z := new(big.Int).Sub(x, y)
 	if z.Sign() < 0 {
 		z.Add(z, r.m)
@@ -100,15 +116,28 @@ func (r residues) Sub(x, y *big.Int) *big.Int {
 	return z
 }
 
-func (r residues) Mul(x, y *big.Int) *big.Int {
-	z := contfrac.Product(x, y)
-	if z.Cmp(r.m) >= 0 {
-		z.Rem(z, r.m)
+func (r *residues) Mul(x, y *big.Int) *big.Int { return r.MulSub(x, y, nil) }
+
+func (r *residues) MulSub(x, y, z *big.Int) *big.Int {
+	p := r.product
+	if len(r.m.Bits()) > scratchWords {
+		p = contfrac.Product(x, y)
+	} else {
+		p.Mul(x, y)
 	}
-	return z
+	if z != nil && p.Sub(p, z).Sign() < 0 {
+		return new(big.Int).Add(p, r.m) // z < m
+	}
+	rem := new(big.Int)
+	r.quotient.QuoRem(p, r.m, rem)
+	return rem
 }
 
-func (residues) IsZero(x *big.Int) bool { return x.Sign() == 0 }
+// scratchWords is the size of a modulus, in words, past which contfrac.Product
+// is asked and the space for a product is not worth keeping.
+const scratchWords = 256
+
+func (*residues) IsZero(x *big.Int) bool { return x.Sign() == 0 }
 
 // wordResidues is the ring Z/m for a modulus that fits a machine word.
 type wordResidues struct{ m uint64 }
@@ -141,6 +170,8 @@ func (r wordResidues) Mul(x, y uint64) uint64 {
 	_, rem := bits.Div64(hi, lo, r.m) // hi < m, since both factors are < m
 	return rem
 }
+
+func (r wordResidues) MulSub(x, y, z uint64) uint64 { return r.Sub(r.Mul(x, y), z) }
 
 func (wordResidues) IsZero(x uint64) bool { return x == 0 }
 

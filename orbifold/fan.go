@@ -6,9 +6,14 @@ import (
 	"example.com/onecusp/farey"
 )
 
-// jumpLength is the length from which a run of flips about one vertex is
-// jumped and not stepped; BenchmarkJumpLength shows where the two meet.
-var jumpLength = uint64(5)
+// A run of flips about one vertex is jumped and not stepped from this length
+// on, over the integers, where a step costs the more the farther out it is, and in
+// residue rings, where all steps cost the same. BenchmarkJumpLength shows where the
+// two ways meet.
+var (
+	jumpLength        = uint64(12)
+	residueJumpLength = uint64(32)
+)
 
 // fan is the sequence of arcs round a fixed vertex, the pivot, of number N:
 // y₀ lies behind the edge (pivot, y₁), and by (X), with t = K·N − k,
@@ -31,19 +36,10 @@ func (x rule[T]) fan(pivot, y1, y0 vertex[T], step func() bool) fan[T] {
 // class returns the class of arc n.
 func (f fan[T]) class(n *big.Int) farey.Class { return f.y[n.Bit(0)].class }
 
-// next returns arc i+1 from the arcs i and i−1.
-func (f fan[T]) next(cur, prev vertex[T]) vertex[T] {
-	n := f.x.Mul(f.t, cur.number)
-	if w := f.x.weight[cur.class]; !f.x.IsZero(w) {
-		n = f.x.Sub(n, f.x.Mul(w, f.pivot.number))
-	}
-	return vertex[T]{f.x.Sub(n, prev.number), prev.class}
-}
-
 // pair returns the arcs n and n+1, for two multiplications of the size of the
 // result at the top.
 func (f fan[T]) pair(n *big.Int) (lo, hi vertex[T]) {
-	if n.IsUint64() && n.Uint64() < jumpLength {
+	if n.IsUint64() && n.Uint64() < f.x.jumpLength {
 		return f.walk(n.Uint64())
 	}
 	return f.leap(n, true)
@@ -52,7 +48,7 @@ func (f fan[T]) pair(n *big.Int) (lo, hi vertex[T]) {
 // term returns arc n, for one multiplication of the size of the result at the
 // top.
 func (f fan[T]) term(n *big.Int) vertex[T] {
-	if n.IsUint64() && n.Uint64() <= jumpLength {
+	if n.IsUint64() && n.Uint64() <= f.x.jumpLength {
 		lo, hi := f.walk(max(n.Uint64(), 1) - 1)
 		if n.Sign() == 0 {
 			return lo
@@ -66,8 +62,20 @@ func (f fan[T]) term(n *big.Int) vertex[T] {
 // walk returns the arcs n and n+1 by n single steps.
 func (f fan[T]) walk(n uint64) (lo, hi vertex[T]) {
 	lo, hi = f.y[0], f.y[1]
-	for ; n > 0 && f.step(); n-- {
-		lo, hi = hi, f.next(hi, lo)
+	var drift [2]T // c_i·N for i even and odd
+	for i := range n {
+		if !f.step() {
+			break
+		}
+		odd := (i + 1) & 1 // hi is arc i+1
+		less := lo.number
+		if w := f.x.weight[hi.class]; !f.x.IsZero(w) {
+			if i < 2 {
+				drift[odd] = f.x.Mul(w, f.pivot.number)
+			}
+			less = f.x.Add(less, drift[odd])
+		}
+		lo, hi = hi, vertex[T]{f.x.MulSub(f.t, hi.number, less), lo.class}
 	}
 	return lo, hi
 }
@@ -90,16 +98,16 @@ type shift[T any] struct {
 // jump returns arc m+j from arc m (class of its neighbours: other) and arc m−j.
 func (f fan[T]) jump(mid vertex[T], other farey.Class, s shift[T], back vertex[T]) vertex[T] {
 	x := f.x
-	n := x.Sub(x.Mul(s.v, mid.number), back.number)
+	less := back.number
 	c, d := x.weight[mid.class], x.weight[other]
 	if !x.IsZero(c) || !x.IsZero(d) {
 		w := x.Mul(s.g, x.Add(x.Mul(f.t, c), x.Add(d, d)))
 		if s.odd {
 			w = x.Add(w, c)
 		}
-		n = x.Sub(n, x.Mul(w, f.pivot.number))
+		less = x.Add(less, x.Mul(w, f.pivot.number))
 	}
-	return vertex[T]{n, back.class}
+	return vertex[T]{x.MulSub(s.v, mid.number, less), back.class}
 }
 
 // weighted tells whether the law of this fan has an inhomogeneous part.
@@ -162,7 +170,7 @@ func (f fan[T]) double(s shift[T], want bool, one, two T) (d shift[T]) {
 		return d
 	}
 	x := f.x
-	d.v = x.Sub(x.Mul(s.v, s.v), two)
+	d.v = x.MulSub(s.v, s.v, two)
 	switch {
 	case !f.weighted():
 	case !s.odd:
@@ -182,7 +190,7 @@ func (f fan[T]) between(lo, hi shift[T], want bool, two T) (d shift[T]) {
 		return d
 	}
 	x := f.x
-	d.v, d.odd = x.Sub(x.Mul(lo.v, hi.v), f.t), true
+	d.v, d.odd = x.MulSub(lo.v, hi.v, f.t), true
 	if f.weighted() {
 		even, odd := lo, hi
 		if lo.odd {
