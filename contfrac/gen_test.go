@@ -25,8 +25,23 @@ func natural(bits int) *rapid.Generator[*big.Int] {
 		case 2:
 			return big.NewInt(rapid.Int64Range(0, 1000).Draw(t, "medium"))
 		}
-		n := new(big.Int).SetBytes(rapid.SliceOfN(rapid.Byte(), 0, (bits+7)/8).Draw(t, "bytes"))
-		return n.Rsh(n, uint(max(0, n.BitLen()-bits)))
+		return sized(bits).Draw(t, "large")
+	})
+}
+
+// sized draws integers of any bits, as often long as short.
+func sized(bits int) *rapid.Generator[*big.Int] {
+	return rapid.Custom(func(t *rapid.T) *big.Int {
+		size := max(1, bits*rapid.SampledFrom([]int{16, 15, 12, 8, 4, 2, 1}).Draw(t, "sixteenths")/16-rapid.IntRange(0, 64).Draw(t, "less"))
+		return pseudorandom(size, rapid.Uint64().Draw(t, "seed"))
+	})
+}
+
+// list draws slices of up to most elements, as often long as short.
+func list[T any](of *rapid.Generator[T], least, most int) *rapid.Generator[[]T] {
+	return rapid.Custom(func(t *rapid.T) []T {
+		n := max(least, most*rapid.SampledFrom([]int{0, 1, 2, 4, 8, 12, 16}).Draw(t, "sixteenths")/16-rapid.IntRange(0, 3).Draw(t, "less"))
+		return rapid.SliceOfN(of, n, n).Draw(t, "list")
 	})
 }
 
@@ -55,7 +70,7 @@ func positive() *rapid.Generator[*big.Int] {
 // fraction draws regular continued fractions, the empty one among them.
 func fraction() *rapid.Generator[contfrac.Fraction] {
 	return rapid.Custom(func(t *rapid.T) contfrac.Fraction {
-		terms := rapid.SliceOfN(positive(), 0, 40).Draw(t, "terms")
+		terms := list(positive(), 0, 40).Draw(t, "terms")
 		if len(terms) > 0 && rapid.Bool().Draw(t, "any first term") {
 			terms[0] = integer(100).Draw(t, "first")
 		}
@@ -72,7 +87,7 @@ func word() *rapid.Generator[contfrac.Word] {
 	return rapid.Custom(func(t *rapid.T) contfrac.Word {
 		l := letter().Draw(t, "first letter")
 		var b contfrac.WordBuilder
-		for _, n := range rapid.SliceOfN(positive(), 0, 30).Draw(t, "runs") {
+		for _, n := range list(positive(), 0, 30).Draw(t, "runs") {
 			if err := b.AppendBig(l, n); err != nil {
 				t.Fatal(err)
 			}
@@ -84,7 +99,7 @@ func word() *rapid.Generator[contfrac.Word] {
 
 // shortWord draws words of few letters, letter by letter.
 func shortWord() *rapid.Generator[contfrac.Word] {
-	return rapid.Map(rapid.SliceOfN(letter(), 0, 40), func(letters []contfrac.Letter) contfrac.Word {
+	return rapid.Map(list(letter(), 0, 60), func(letters []contfrac.Letter) contfrac.Word {
 		return contfrac.WordOf(letters...)
 	})
 }

@@ -7,10 +7,11 @@ import "math/big"
 // satisfy (x₀, y₀) = M·(x, y), M = ∏ [[q, 1], [1, 0]].
 //
 // Quotients may be found from the leading bits of x and y alone, in any way: as
-// x₀/y₀ = [q₁; …, qₖ, x/y] and expansions are unique, they are right exactly if the
-// numbers M⁻¹·(x₀, y₀) satisfy x > y ≥ 0. That is checked on the whole
-// numbers, and quotients are taken back from the end until it holds. Source of
-// the halving: "Schnelle Berechnung von Kettenbruchentwicklungen", Acta
+// x₀/y₀ = [q₁; …, qₖ, x/y] and expansions are unique, they are right if the
+// numbers (x, y) = M⁻¹·(x₀, y₀) satisfy x > y > 0. That is checked on the whole
+// numbers, and quotients are taken back from the end until it holds. (With y = 0
+// they would be right too unless the last is 1; it is simpler to take the last
+// one back and leave it to a division.) Source of the halving: "Schnelle Berechnung von Kettenbruchentwicklungen", Acta
 // Informatica 1 (1971).
 type expansion struct{ termBuilder }
 
@@ -81,7 +82,7 @@ func (e *expansion) leading(x, y *big.Int, k, s int) (_, _ *big.Int, m entries) 
 	}
 	u = du.Add(du, u.Lsh(u, uint(k)))
 	v = dv.Add(dv, v.Lsh(v, uint(k)))
-	for v.Sign() < 0 || u.Cmp(v) <= 0 {
+	for v.Sign() <= 0 || u.Cmp(v) <= 0 {
 		q := e.pop()
 		u, v = v.Add(v, Product(q, u)), u
 		m = entries{m.b, m.a.Sub(m.a, Product(q, m.b)), m.d, m.c.Sub(m.c, Product(q, m.d))}
