@@ -7,9 +7,9 @@ import (
 )
 
 // Vertices returns the vertices, numbered from 0 in the order in which the
-// tiles bring them in: of tile 1 south-west, south-east, north-west, north-east, of every
-// other tile the two new ones, lower or left one first. A graph of n tiles has 2n + 2. It
-// returns [ErrTooLong] past [MaxTiles] tiles.
+// tiles bring them in: of tile 1 south-west, south-east, north-west,
+// north-east, of every other tile the two new ones, lower or left one first. A
+// graph of n tiles has 2n + 2. It returns [ErrTooLong] past [MaxTiles] tiles.
 func (g Graph) Vertices() ([]Point, error) {
 	s, err := g.layout("vertices", MaxTiles)
 	if err != nil {
@@ -30,7 +30,8 @@ func (g Graph) Vertices() ([]Point, error) {
 }
 
 // Adjacency returns, for each vertex by its number in [Graph.Vertices], the
-// numbers of its neighbours in increasing order. It returns [ErrTooLong] past [MaxTiles] tiles.
+// numbers of its neighbours in increasing order. It returns [ErrTooLong] past
+// [MaxTiles] tiles.
 func (g Graph) Adjacency() ([][]int, error) {
 	v, err := g.Vertices()
 	if err != nil {
@@ -62,7 +63,8 @@ func (g Graph) Adjacency() ([][]int, error) {
 }
 
 // AdjacencyText writes the adjacency lists, one line for each vertex: its
-// number, a colon, and the numbers of its neighbours. It returns [ErrTooLong] past [MaxTiles] tiles.
+// number, a colon, and the numbers of its neighbours. It returns [ErrTooLong]
+// past [MaxTiles] tiles.
 func (g Graph) AdjacencyText() (string, error) {
 	lists, err := g.Adjacency()
 	if err != nil {

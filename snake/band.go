@@ -14,17 +14,18 @@ import (
 var ErrOneLetter = errors.New("a band needs both letters")
 
 // Band is a band graph: a snake graph of n tiles whose last tile is glued to
-// its first one. It carries a cyclic word of n letters, the last of them between tile
-// n and tile 1. Its good matchings are the perfect matchings that come from a
-// matching of the cut snake which uses a copy of the cut edge, one copy
-// removed; equivalently, those in which the two ends of every glue edge are covered from one
-// side or by the edge itself.
+// its first one. It carries a cyclic word of n letters, the last of them
+// between tile n and tile 1. Its good matchings are the perfect matchings that
+// come from a matching of the cut snake which uses a copy of the cut edge, one
+// copy removed; equivalently, those in which the two ends of every glue edge
+// are covered from one side or by the edge itself.
 //
 // A good matching is a [Matching] with n digits like any other, and the good
 // matchings are the order ideals of the ring-shaped [Fence].
 //
 // A Band is immutable. The zero value has no tiles and no good matching.
-// Sources: "Positivity for cluster algebras from surfaces", Adv. Math. 227 (2011).
+// Sources: "Positivity for cluster algebras from surfaces", Adv. Math. 227
+// (2011).
 type Band struct {
 	run contfrac.Word
 	s   *shape // the layout; nil when it is long, and for the zero value
@@ -57,10 +58,11 @@ func closedShape(w contfrac.Word, n int) *shape {
 	return s
 }
 
-// Band closes the chain built so far: the turn letter from the last tile to
-// the first one and the label of the edge they are glued along. The labels that
+// Band closes the chain built so far: the turn letter from the last tile to the
+// first one and the label of the edge they are glued along. The labels that
 // [NewBuilder] got for the start of an arc are not used: the side in question
-// now carries the label of the last diagonal. It returns [ErrOneLetter] unless both letters occur.
+// now carries the label of the last diagonal. It returns [ErrOneLetter] unless
+// both letters occur.
 func (b *Builder) Band(turn contfrac.Letter, glue Label) (Band, error) {
 	open := b.Graph(NoLabel, NoLabel)
 	var w contfrac.WordBuilder
@@ -94,9 +96,10 @@ func (b Band) Tiles() int {
 // one between the last tile and tile 1.
 func (b Band) Word() contfrac.Word { return b.run }
 
-// Count returns the number of good matchings. For a band in run form it is the trace of
-// the matrix of the word, in O(runs) big multiplications; for a band made by a
-// [Builder] the trace of the balanced product of the transfer matrices of its tiles.
+// Count returns the number of good matchings. For a band in run form it is the
+// trace of the matrix of the word, in O(runs) big multiplications; for a band
+// made by a [Builder] the trace of the balanced product of the transfer
+// matrices of its tiles.
 func (b Band) Count() *big.Int {
 	switch {
 	case b.run.IsEmpty():
@@ -130,8 +133,9 @@ func (b Band) Set() (Set, error) {
 }
 
 // Matchings yields the good matchings, each once, in increasing lexicographic
-// order of their 0/1 strings. It can be run again, and costs what [Graph.Matchings] costs. A band of more than
-// [MaxTiles] tiles yields nothing; [Band.Set] reports that as an error.
+// order of their 0/1 strings. It can be run again, and costs what
+// [Graph.Matchings] costs. A band of more than [MaxTiles] tiles yields nothing;
+// [Band.Set] reports that as an error.
 func (b Band) Matchings() iter.Seq[Matching] {
 	t, err := b.Set()
 	if err != nil {
@@ -147,21 +151,7 @@ func (b Band) Fence() (Fence, error) {
 	return Fence{s}, err
 }
 
-// WeighBand returns the weight of a band in a semiring: the sum over its good
-// matchings of the product of the weights of the edges used and the tiles
-// flipped, as [Weigh] does for a snake graph. It takes twice as many operations.
-// It returns [ErrTooLong] past [MaxTiles] tiles.
-func WeighBand[T any](r Semiring[T], b Band, w Weights[T]) (T, error) {
-	s, err := b.layout("weight", MaxTiles)
-	if err != nil || s == nil {
-		return r.Zero(), err
-	}
-	start := transfer(r, s, w, [2]T{free: r.One(), covered: r.Zero()})
-	other := transfer(r, s, w, [2]T{free: r.Zero(), covered: r.One()})
-	return r.Add(start[free], other[covered]), nil
-}
-
-// String describes the band in one line, with its whole cyclic word by runs.
+// String describes the band in one line, with its whole cyclic word.
 // The verb %v shortens long words.
 func (b Band) String() string { return b.describe("%s") }
 
@@ -170,11 +160,8 @@ func (b Band) String() string { return b.describe("%s") }
 func (b Band) Format(f fmt.State, verb rune) { formatAs(f, verb, b.describe) }
 
 func (b Band) describe(verb string) string {
-	switch {
-	case b.run.IsEmpty():
+	if b.run.IsEmpty() {
 		return "band graph, empty"
-	case verb == "%v":
-		return fmt.Sprintf("band graph, %s tiles: %v", contfrac.Abbreviate(b.run.Len()), b.run)
 	}
-	return fmt.Sprintf("band graph, %s tiles: %s", b.run.Len(), b.run.Compact())
+	return fmt.Sprintf("band graph, %s tiles: "+verb, contfrac.Abbreviate(b.run.Len()), b.run)
 }

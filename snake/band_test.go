@@ -15,8 +15,9 @@ import (
 	"example.com/onecusp/snake"
 )
 
-// goodMatchings applies the definition: matchings of the cut snake that use a copy of the cut edge,
-// one copy removed, then the two copies identified, each result counted once.
+// goodMatchings applies the definition: matchings of the cut snake that use a
+// copy of the cut edge, one copy removed, then the two copies identified, each
+// result counted once.
 func goodMatchings(word string) map[string]bool {
 	n := len(word)
 	tiles := plainTiles(word[:n-1])
@@ -41,8 +42,8 @@ func goodMatchings(word string) map[string]bool {
 	return good
 }
 
-// cutEdges are the two copies of the edge where the band is cut: going on with the
-// word, tile n + 1 lies where the last letter says and is a copy of tile 1.
+// cutEdges are the two copies of the edge where the band is cut: going on with
+// the word, tile n + 1 lies where the last letter says and is a copy of tile 1.
 func cutEdges(word string) (first, last latticeEdge) {
 	n := len(word)
 	tiles := plainTiles(word)
@@ -102,8 +103,9 @@ func TestBandMatchingsAreTheGoodMatchings(t *testing.T) {
 	}
 }
 
-// The band of slope 3/7 in the classical case: word and trace from the project's mathematics notes,
-// section 5; 507 = 3·169, and 169 is a Markov number (OEIS A002559).
+// The band of slope 3/7 in the classical case: word and trace from the
+// project's mathematics notes, section 5; 507 = 3·169, and 169 is a Markov
+// number (OEIS A002559).
 func TestBandOfASlopeCountsThreeTimesTheNumber(t *testing.T) {
 	b, err := snake.BandFromWord(mustWord("RRLRLLRRLLRRLL"))
 	require.NoError(t, err)
@@ -184,7 +186,8 @@ func TestBandsAreIsomorphicUpToRotationReversalAndLetters(t *testing.T) {
 }
 
 func TestBandLabels(t *testing.T) {
-	// Tile by tile around: every glue and diagonal label is found again on the right edges.
+	// Tile by tile around: every glue and diagonal label is found again on the
+	// right edges.
 	b := snake.NewBuilder(1, 9, 9)
 	b.Glue(contfrac.R, 11, 2).Glue(contfrac.L, 12, 3)
 	band, err := b.Band(contfrac.L, 13)
@@ -213,7 +216,7 @@ func TestZeroBand(t *testing.T) {
 	require.NoError(t, err)
 	assert.Equal(t, new(big.Int), set.Count())
 	assert.False(t, set.Contains(snake.Matching{}))
-	w, err := snake.WeighBand(snake.Floats{}, b, snake.Weights[float64]{})
+	w, err := snake.Weigh(snake.Floats{}, b, snake.Weights[float64]{})
 	require.NoError(t, err)
 	assert.Zero(t, w)
 	_, err = b.SVG(snake.Drawing{})

@@ -1,6 +1,7 @@
 package snake_test
 
 import (
+	"math/bits"
 	"slices"
 
 	"example.com/onecusp/contfrac"
@@ -88,6 +89,37 @@ func perfectMatchings(edges []latticeEdge) [][]latticeEdge {
 	}
 	try()
 	return all
+}
+
+// plainCount counts perfect matchings of up to 64 vertices by the same search
+// on bits.
+func plainCount(edges []latticeEdge) int64 {
+	number := map[snake.Point]int{}
+	of := func(v snake.Point) int {
+		if _, ok := number[v]; !ok {
+			number[v] = len(number)
+		}
+		return number[v]
+	}
+	var neighbours [64]uint64
+	for _, e := range edges {
+		i, j := of(e.from), of(e.to)
+		neighbours[i] |= 1 << j
+		neighbours[j] |= 1 << i
+	}
+	var count func(open uint64) int64
+	count = func(open uint64) int64 {
+		if open == 0 {
+			return 1
+		}
+		n := int64(0)
+		v := bits.TrailingZeros64(open)
+		for rest := neighbours[v] & open; rest != 0; rest &= rest - 1 {
+			n += count(open &^ (1 << v) &^ (rest & -rest))
+		}
+		return n
+	}
+	return count(1<<len(number) - 1)
 }
 
 // asLattice turns sides into edges by end points.

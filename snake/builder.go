@@ -12,12 +12,14 @@ import (
 //
 // It needs to know only what one sees while walking along the arc. The two
 // triangles on either side of a crossed edge are the two halves of its tile:
-// the south-west half comes first. Of that half, one side is glued to the tile before
-// and carries the label of the glue, the other carries the label of the
-// diagonal of the tile before; the north-east half likewise with the tile after.
+// the south-west half comes first. Of that half, one side is glued to the tile
+// before and carries the label of the glue, the other carries the label of the
+// diagonal of the tile before; the north-east half likewise with the tile
+// after.
 //
-// A Builder must not be copied once used, nor used from several goroutines at
-// once. The graphs it returns are independent of it.
+// The zero value starts with a first tile without labels. A Builder must not be
+// copied once used, nor used from several goroutines at once. The graphs it
+// returns are independent of it.
 type Builder struct {
 	dir []Direction
 	lab labelling
@@ -30,9 +32,16 @@ type Builder struct {
 // On tile 1, and on every odd tile, the right end is the north-west corner and
 // the left end the south-east one; on even tiles it is the other way round.
 func NewBuilder(diagonal, left, right Label) *Builder {
-	return &Builder{
-		dir: []Direction{Right},
-		lab: labelling{diagonal: []Label{diagonal}, start: [2]Label{right, left}},
+	b := new(Builder)
+	b.begin()
+	b.lab.diagonal[0], b.lab.start = diagonal, [2]Label{right, left}
+	return b
+}
+
+// begin makes sure that there is a first tile.
+func (b *Builder) begin() {
+	if len(b.dir) == 0 {
+		b.dir, b.lab.diagonal = []Direction{Right}, []Label{NoLabel}
 	}
 }
 
@@ -45,15 +54,17 @@ func (b *Builder) Glue(turn contfrac.Letter, glue, diagonal Label) *Builder {
 }
 
 // GlueOwn appends a tile for one more letter of the same crossing: the turn
-// letter is the crossing's own letter, and the glue and the new diagonal carry the
-// label of the last diagonal. Two tiles from one crossing form a [Hexagon].
+// letter is the crossing's own letter, and the glue and the new diagonal carry
+// the label of the last diagonal. Two tiles from one crossing form a [Hexagon].
 // It returns the builder.
 func (b *Builder) GlueOwn(own contfrac.Letter) *Builder {
+	b.begin()
 	d := b.lab.diagonal[len(b.lab.diagonal)-1]
 	return b.glue(own, d, d, true)
 }
 
 func (b *Builder) glue(turn contfrac.Letter, glue, diagonal Label, own bool) *Builder {
+	b.begin()
 	b.dir = append(b.dir, glueDirection(len(b.dir), turn))
 	b.lab.glue = append(b.lab.glue, glue)
 	b.lab.diagonal = append(b.lab.diagonal, diagonal)
@@ -61,13 +72,14 @@ func (b *Builder) glue(turn contfrac.Letter, glue, diagonal Label, own bool) *Bu
 	return b
 }
 
-// Tiles returns the number of tiles glued so far.
-func (b *Builder) Tiles() int { return len(b.lab.diagonal) }
+// Tiles returns the number of tiles so far, at least 1.
+func (b *Builder) Tiles() int { return max(1, len(b.lab.diagonal)) }
 
 // Graph returns the graph built so far, its last tile closed with the labels of
 // the two sides from the left and from the right end of the last crossed edge to
 // the end of the arc. The builder may go on afterwards.
 func (b *Builder) Graph(left, right Label) Graph {
+	b.begin()
 	n := len(b.lab.diagonal)
 	s := &shape{
 		n:   n,

@@ -6,13 +6,14 @@ import (
 	"example.com/onecusp/contfrac"
 )
 
-// Canonical returns the word that stands for the graph however it lies: of the word,
-// its reversal, and both with the letters exchanged, the first in lexicographic
-// order with L before R. It returns false for the single edge, which has no
-// word. Cost: O(runs).
+// Canonical returns the word that stands for the graph however it lies: of the
+// word, its reversal, and both with the letters exchanged, the first in
+// lexicographic order with L before R. It returns false for the single edge,
+// which has no word. Cost: O(runs).
 //
-// Turning a snake graph round reverses the word; reflecting it in a diagonal exchanges the
-// letters. Two snake graphs are isomorphic exactly when their canonical words are equal.
+// Turning a snake graph round reverses the word; reflecting it in a diagonal
+// exchanges the letters. Two snake graphs are isomorphic exactly when their
+// canonical words are equal.
 func (g Graph) Canonical() (contfrac.Word, bool) {
 	w, ok := g.Word()
 	if !ok {
@@ -43,7 +44,8 @@ func earlier(v, w contfrac.Word) contfrac.Word {
 	a, b := v.Fraction().Terms(), w.Fraction().Terms()
 	for i := range min(len(a), len(b)) {
 		if c := a[i].Cmp(b[i]); c != 0 {
-			// Where the shorter run ends the other letter follows: L's want to be many, R's few.
+			// Where the shorter run ends the other letter follows: L's want to
+			// be many, R's few.
 			if (c > 0) == (i%2 == 0) {
 				return v
 			}
@@ -56,7 +58,8 @@ func earlier(v, w contfrac.Word) contfrac.Word {
 // Canonical returns the cyclic word that stands for the band wherever it is cut
 // and however it lies: it starts with a whole run of L's, and among all
 // rotations of its run lengths, forwards and backwards, its own come first in
-// lexicographic order. It returns the empty word for the zero value. Cost: O(runs).
+// lexicographic order. It returns the empty word for the zero value. Cost:
+// O(runs).
 func (b Band) Canonical() contfrac.Word {
 	if b.run.IsEmpty() {
 		return b.run

@@ -144,9 +144,9 @@ func slopes(most int) *rapid.Generator[[2]int] {
 	}).Filter(func(s [2]int) bool { return gcd(s[0], s[1]) == 1 && s != [2]int{1, 1} })
 }
 
-// The Laurent expansion of an arc is the sum over the matchings of the products of
-// edge labels over the product of all diagonals.
-// "Cluster expansion formulas and perfect matchings", J. Algebraic Combin. 32 (2010).
+// The Laurent expansion of an arc is the sum over the matchings of the products
+// of edge labels over the product of all diagonals. "Cluster expansion formulas
+// and perfect matchings", J. Algebraic Combin. 32 (2010).
 func TestLabelsGiveTheLaurentExpansion(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		s := slopes(15).Draw(t, "slope")
@@ -166,8 +166,8 @@ func TestLabelsGiveTheLaurentExpansion(t *testing.T) {
 	})
 }
 
-// Numbers at slopes. Source: the project's table of values computed from plain definitions by an
-// independent slow model.
+// Numbers at slopes. Source: the project's table of values computed from plain
+// definitions by an independent slow model.
 func TestCountsAreTheNumbersAtSlopes(t *testing.T) {
 	slopes := [][2]int{{1, 2}, {1, 3}, {2, 3}, {3, 7}, {3, 8}, {5, 7}, {5, 2}}
 	for weights, numbers := range map[[3]int][]int64{
@@ -182,7 +182,8 @@ func TestCountsAreTheNumbersAtSlopes(t *testing.T) {
 	}
 }
 
-// The two tiles of a crossing of weight 1 form a hexagon; of other weights none does.
+// The two tiles of a crossing of weight 1 form a hexagon; of other weights none
+// does.
 func TestHexagonsAreTheCrossingsOfWeightOne(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		s := slopes(12).Draw(t, "slope")
@@ -201,7 +202,8 @@ func TestHexagonsAreTheCrossingsOfWeightOne(t *testing.T) {
 			found[h.Label]++
 		}
 		require.Equal(t, want, found)
-		// Without the chords the number changes, by exactly the matchings that use one; so they stay.
+		// Without the chords the number changes, by exactly the matchings that
+		// use one; so they stay.
 		set, err := g.Set()
 		require.NoError(t, err)
 		for h := range g.Hexagons() {

@@ -9,7 +9,8 @@ import (
 	"example.com/onecusp/snake"
 )
 
-// Counting on vertices and edges and the matrix of the word are two routes to one number.
+// Counting on vertices and edges and the matrix of the word are two routes to
+// one number.
 func TestCountOnEdgesIsCountByWord(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		word := words(400).Draw(t, "word")

@@ -7,14 +7,16 @@ import (
 	"example.com/onecusp/contfrac"
 )
 
-// Fence is the poset on the tiles of a graph or band whose order ideals are
-// its matchings: neighbouring tiles are comparable, the letter between them says which
-// way, and all other relations follow. The fence of a band is closed in a ring.
+// Fence is the poset on the tiles of a graph or band whose order ideals are its
+// matchings: neighbouring tiles are comparable, the letter between them says
+// which way, and all other relations follow. The fence of a band is closed in a
+// ring.
 //
 // The zero value is the empty poset, which has one ideal.
 type Fence struct{ s *shape }
 
-// Fence returns the poset on the tiles. It returns [ErrTooLong] past [MaxTiles] tiles.
+// Fence returns the poset on the tiles. It returns [ErrTooLong] past [MaxTiles]
+// tiles.
 func (g Graph) Fence() (Fence, error) {
 	s, err := g.layout("fence", MaxTiles)
 	return Fence{s}, err
@@ -61,8 +63,8 @@ func (f Fence) Relations() iter.Seq2[int, int] {
 	}
 }
 
-// Below reports whether tile a is below tile b or equal to it; false when either is
-// no tile. Cost: O(|a − b|) on a chain, O(tiles) on a ring.
+// Below reports whether tile a is below tile b or equal to it; false when
+// either is no tile. Cost: O(|a − b|) on a chain, O(tiles) on a ring.
 func (f Fence) Below(a, b int) bool {
 	n := f.Size()
 	if a < 1 || b < 1 || a > n || b > n {

@@ -15,13 +15,13 @@ type Hasse struct {
 	arcs  []Arc
 }
 
-// Arc is a flip of one tile, from the matching with number Lower up to the one with
-// number Upper.
+// Arc is a flip of one tile, from the matching with number Lower up to the one
+// with number Upper.
 type Arc struct{ Lower, Upper, Tile int }
 
-// Hasse writes the flip graph of the set out. It returns a [*TooManyError]
-// with the exact count when there are more than limit matchings, before any is listed.
-// Cost: O(tiles) a matching.
+// Hasse writes the flip graph of the set out. It returns a [*TooManyError] with
+// the exact count when there are more than limit matchings, before any is
+// listed. Cost: O(tiles) a matching.
 func (t Set) Hasse(limit int) (Hasse, error) {
 	count, err := t.within(limit)
 	if err != nil {
@@ -50,8 +50,8 @@ func (h Hasse) Nodes() []Matching { return slices.Clone(h.nodes) }
 func (h Hasse) Arcs() []Arc { return slices.Clone(h.arcs) }
 
 // DOT returns the diagram in the DOT graph language, growing upwards: a node
-// for each matching, named m0, m1, …, with its 0/1 string as label, and an edge for each flip, labelled with
-// its tile.
+// for each matching, named m0, m1, …, with its 0/1 string as label, and an edge
+// for each flip, labelled with its tile.
 func (h Hasse) DOT() string {
 	var b strings.Builder
 	b.WriteString("digraph matchings {\n  rankdir=BT;\n  node [shape=box, fontname=\"monospace\"];\n  edge [dir=none];\n")

@@ -11,7 +11,8 @@ const MaxDrawnMatchings = 400
 
 // SVG draws the diagram as a self-contained SVG image, growing upwards, with a
 // small picture of the matching at every node and the flipped tile's number at
-// every line. The Drawing's Matching is ignored, and texts are left out of the small pictures.
+// every line. The Drawing's Matching is ignored, and texts are left out of the
+// small pictures.
 //
 // It returns a [*TooManyError] past [MaxDrawnMatchings] matchings and
 // [ErrTooLong] past [MaxDrawnTiles] tiles.
@@ -78,7 +79,8 @@ func (h Hasse) SVG(d Drawing) (string, error) {
 }
 
 // arranged orders every level so that lines cross little: nodes go to the mean
-// place of their neighbours on the level before, sweeping up and down a few times.
+// place of their neighbours on the level before, sweeping up and down a few
+// times.
 func (h Hasse) arranged() [][]int {
 	levels := h.levels()
 	place := make([]float64, len(h.nodes))

@@ -5,10 +5,11 @@ import (
 	"iter"
 )
 
-// Hexagon is a pair of tiles that come from one crossing of a loop of weight
-// 1: the crossing's own letter glued them ([Builder.GlueOwn]), and there is
+// Hexagon is a pair of tiles that come from one crossing of a loop of weight 1:
+// the crossing's own letter glued them ([Builder.GlueOwn]), and there is
 // exactly one such letter. They can be drawn as one hexagon; its chord, the
-// glue edge of the two, stays an edge of the graph: without it the number of matchings changes.
+// glue edge of the two, stays an edge of the graph: without it the number of
+// matchings changes.
 type Hexagon struct {
 	First int   // index of its first tile; the second is the next one
 	Chord Side  // the edge inside

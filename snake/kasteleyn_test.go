@@ -10,10 +10,10 @@ import (
 	"example.com/onecusp/snake"
 )
 
-// kasteleyn returns |det| of the signed, weighted adjacency matrix between the even
-// and the odd vertices: vertical edges in odd columns are negative, so that the signs round
-// every tile multiply to −1.
-// "Dimer statistics and phase transitions", J. Math. Phys. 4 (1963).
+// kasteleyn returns |det| of the signed, weighted adjacency matrix between the
+// even and the odd vertices: vertical edges in odd columns are negative, so
+// that the signs round every tile multiply to −1. "Dimer statistics and phase
+// transitions", J. Math. Phys. 4 (1963).
 func kasteleyn(g snake.Graph, weight func(snake.Side) *big.Rat) *big.Rat {
 	vertices, err := g.Vertices()
 	if err != nil {

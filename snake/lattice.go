@@ -131,8 +131,8 @@ func (t Set) EdgesOf(m Matching) ([]Side, error) {
 
 // Flips returns the tiles of a matching that have two opposite edges in it and
 // can be flipped within the set, in increasing order: those that are not
-// flipped go up, the others down. It returns [ErrNotMatching] when m does not belong to the set.
-// Cost: O(tiles) for all of them together.
+// flipped go up, the others down. It returns [ErrNotMatching] when m does not
+// belong to the set. Cost: O(tiles) for all of them together.
 func (t Set) Flips(m Matching) ([]int, error) {
 	if !t.Contains(m) {
 		return nil, notIn("flips", m, t)
@@ -196,9 +196,10 @@ func (t Set) allows(tile int, from state, up bool) bool {
 	return false
 }
 
-// Minimal returns the least matching of the set; sets closed under meet and join, as all
-// that [Set.WithTile] and [Set.WithEdge] make, have one unless they are empty. It is the first that
-// [Set.All] yields. It returns [ErrIndex] when the set is empty.
+// Minimal returns the least matching of the set; sets closed under meet and
+// join, as all that [Set.WithTile] and [Set.WithEdge] make, have one unless
+// they are empty. It is the first that [Set.All] yields. It returns [ErrIndex]
+// when the set is empty.
 func (t Set) Minimal() (Matching, error) { return t.extreme(false) }
 
 // Maximal returns the greatest matching of the set, the last that [Set.All]

@@ -74,7 +74,8 @@ func TestMatchingsFormADistributiveLattice(t *testing.T) {
 	})
 }
 
-// A flip keeps to the set, changes two opposite sides of one tile, and is undone by itself.
+// A flip keeps to the set, changes two opposite sides of one tile, and is
+// undone by itself.
 func TestFlipTurnsTwoOppositeSides(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		r := nonEmpty(t, 80)
@@ -106,7 +107,8 @@ func TestFlipTurnsTwoOppositeSides(t *testing.T) {
 	})
 }
 
-// Flips connect everything; the flip graph is the Hasse diagram: arcs are the covers of the order.
+// Flips connect everything; the flip graph is the Hasse diagram: arcs are the
+// covers of the order.
 func TestHasseDiagram(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		r := sets(6).Draw(t, "set")

@@ -79,8 +79,9 @@ func compareExponents(a, b []int) int {
 // Len returns the number of monomials.
 func (p Laurent) Len() int { return len(p.terms) }
 
-// Terms yields the exponents and the coefficient of every monomial, both fresh, highest first:
-// exponents in lexicographic order, x1 before x2. It can be run again.
+// Terms yields the exponents and the coefficient of every monomial, both fresh,
+// highest first: exponents in lexicographic order, x1 before x2. It can be run
+// again.
 func (p Laurent) Terms() iter.Seq2[[]int, *big.Int] {
 	return func(yield func([]int, *big.Int) bool) {
 		for _, t := range p.terms {
@@ -135,7 +136,8 @@ func (p Laurent) Add(o Laurent) Laurent {
 	return Laurent{append(append(out, a...), b...)}
 }
 
-// Mul returns po. Cost: one step for each pair of monomials, and log as many for sorting.
+// Mul returns po. Cost: one step for each pair of monomials, and log as many
+// for sorting.
 func (p Laurent) Mul(o Laurent) Laurent {
 	if len(p.terms) < len(o.terms) {
 		p, o = o, p
@@ -177,7 +179,8 @@ func (p Laurent) scale(t laurentTerm) Laurent {
 	return Laurent{out}
 }
 
-// MaxValueBits is the largest size, in bits, of a power that [Laurent.Eval] takes.
+// MaxValueBits is the largest size, in bits, of a power that [Laurent.Eval]
+// takes.
 const MaxValueBits = 1 << 30
 
 // Eval returns the value with x1, x2, … replaced by nonzero rational numbers.

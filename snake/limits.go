@@ -32,9 +32,12 @@ var (
 	// ErrIndex reports an index outside a listing, or any index into an empty
 	// one; also the number of a variable, or an exponent, outside its range.
 	ErrIndex = errors.New("index out of range")
+	// ErrNoSource reports a missing source of random bits.
+	ErrNoSource = errors.New("no source of random bits")
 	// ErrTooLarge reports a number that would be too large to hold.
 	ErrTooLarge = errors.New("number too large")
-	// ErrNotCrossing reports a common piece of two graphs in which they do not cross.
+	// ErrNotCrossing reports a common piece of two graphs in which they do not
+	// cross.
 	ErrNotCrossing = errors.New("not a crossing")
 	// ErrModulus reports a modulus below 1.
 	ErrModulus = errors.New("modulus must be positive")
@@ -47,7 +50,8 @@ type TooManyError struct {
 	Limit int      // how many were accepted
 }
 
-// Error returns a sentence with both numbers, the count shortened when it is long.
+// Error returns a sentence with both numbers, the count shortened when it is
+// long.
 func (e *TooManyError) Error() string {
 	return fmt.Sprintf("snake: %s matchings, at most %d are accepted: %v", contfrac.Abbreviate(e.Count), e.Limit, ErrTooMany)
 }

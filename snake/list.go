@@ -10,8 +10,8 @@ import (
 // tile's flip v is chosen, links[v] is such a description of tiles 2 … n.
 type links struct {
 	possible bool
-	// can[i−1], for tile i ≥ 2, has bit 2a+b set when tile i−1 at a allows tile i at b.
-	// can[0] is unused.
+	// can[i−1], for tile i ≥ 2, has bit 2a+b set when tile i−1 at a allows tile
+	// i at b. can[0] is unused.
 	can []uint8
 }
 
@@ -64,8 +64,8 @@ func bit(b bool) int {
 }
 
 // All yields the matchings of the set in increasing lexicographic order of
-// their 0/1 strings. It can be run again. Up to 64 tiles a step costs a few machine
-// instructions and allocates nothing; past that, one string a step.
+// their 0/1 strings. It can be run again. Up to 64 tiles a step costs a few
+// machine instructions and allocates nothing; past that, one string a step.
 func (t Set) All() iter.Seq[Matching] {
 	return func(yield func(Matching) bool) {
 		if t.none {
@@ -100,8 +100,8 @@ func (l links) least(i int, at bool, set func(tile int, up bool)) {
 }
 
 // listShort lists with all flips in one machine word. The next string raises
-// the last 0 that may be a 1 after the bit before it, and is least behind it; all tiles are
-// asked at once.
+// the last 0 that may be a 1 after the bit before it, and is least behind it;
+// all tiles are asked at once.
 func (l links) listShort(n int, first bool, yield func(Matching) bool) bool {
 	var after0, after1 uint64    // tiles that may be 1 after a 0, after a 1
 	var least0, least1 uint64    // least completion behind tile i
@@ -171,10 +171,10 @@ func (l links) listLong(n int, first bool, yield func(Matching) bool) bool {
 }
 
 // Matchings yields the perfect matchings, each once, in increasing
-// lexicographic order of their 0/1 strings, from the minimal matching to the maximal one. It can be run
-// again. Up to 64 tiles a step costs a few machine instructions and allocates
-// nothing. A graph of more than [MaxTiles] tiles yields nothing; [Graph.Set]
-// reports that as an error.
+// lexicographic order of their 0/1 strings, from the minimal matching to the
+// maximal one. It can be run again. Up to 64 tiles a step costs a few machine
+// instructions and allocates nothing. A graph of more than [MaxTiles] tiles
+// yields nothing; [Graph.Set] reports that as an error.
 func (g Graph) Matchings() iter.Seq[Matching] {
 	t, err := g.Set()
 	if err != nil {

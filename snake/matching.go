@@ -6,10 +6,11 @@ import (
 	"strings"
 )
 
-// Matching is a perfect matching of a snake or band graph, given by the tiles that are
-// flipped in it compared with the minimal matching. It is a comparable
-// value that knows its number of tiles but not its graph; up to 64 tiles it needs no memory
-// beyond itself. The zero value is the matching of the single edge.
+// Matching is a perfect matching of a snake or band graph, given by the tiles
+// that are flipped in it compared with the minimal matching. It is a comparable
+// value that knows its number of tiles but not its graph; up to 64 tiles it
+// needs no memory beyond itself. The zero value is the matching of the single
+// edge.
 type Matching struct {
 	n    int
 	head uint64 // tiles 1 … 64, tile 1 the highest bit
@@ -20,9 +21,10 @@ type Matching struct {
 const headTiles = 64
 
 // ParseMatching returns the matching with the given 0/1 string, one digit for
-// each tile, 1 for flipped: what [Matching.String] prints. Whether it is a matching
-// of a graph is for [Graph.Contains] to say. It returns [ErrNotMatching] for
-// other characters and [ErrTooLong] past [MaxTiles] digits.
+// each tile, 1 for flipped: what [Matching.String] prints. Whether it is a
+// matching of a graph is for [Graph.Contains] to say. It returns
+// [ErrNotMatching] for other characters and [ErrTooLong] past [MaxTiles]
+// digits.
 func ParseMatching(s string) (Matching, error) {
 	if len(s) > MaxTiles {
 		return Matching{}, fmt.Errorf("snake: matching %s: at most %d tiles are accepted: %w", shorten(s), MaxTiles, ErrTooLong)
@@ -105,7 +107,8 @@ func (m Matching) Compare(o Matching) int {
 	case m.head > o.head:
 		return 1
 	}
-	// Padding bits are zero, so bytes decide unless one is the start of the other.
+	// Padding bits are zero, so bytes decide unless one is the start of the
+	// other.
 	if c := strings.Compare(m.rest, o.rest); c != 0 {
 		return c
 	}

@@ -19,9 +19,9 @@ type Polynomial struct {
 const MaxDegree = 1 << 20
 
 // packedLimit is the size, in words, up to which factors are packed into
-// integers for multiplication; a few large coefficients among many small ones are
-// multiplied term by term past it, so that memory stays near the size of the result.
-// BenchmarkPolynomialMul measures both ways.
+// integers for multiplication; a few large coefficients among many small ones
+// are multiplied term by term past it, so that memory stays near the size of
+// the result. BenchmarkPolynomialMul measures both ways.
 var packedLimit = 1 << 24
 
 // NewPolynomial returns the polynomial with the given coefficients, the constant
@@ -34,8 +34,8 @@ func NewPolynomial(coefficients ...*big.Int) Polynomial {
 	return Polynomial{trim(c)}
 }
 
-// Power returns the monomial q^exponent. It returns [ErrIndex] unless
-// 0 ≤ exponent ≤ [MaxDegree].
+// Power returns the monomial q^exponent. It returns [ErrIndex] unless 0 ≤
+// exponent ≤ [MaxDegree].
 func Power(exponent int) (Polynomial, error) {
 	if exponent < 0 || exponent > MaxDegree {
 		return Polynomial{}, fmt.Errorf("snake: monomial q^%d: exponents are 0 to %d: %w", exponent, MaxDegree, ErrIndex)
@@ -247,7 +247,8 @@ func (p Polynomial) Format(f fmt.State, verb rune) {
 	})
 }
 
-// write writes all terms, or this many from either end when there are more than twice as many.
+// write writes all terms, or this many from either end when there are more than
+// twice as many.
 func (p Polynomial) write(number func(*big.Int) string, keep int) string {
 	var terms []signed
 	for i, a := range p.c {
@@ -323,24 +324,23 @@ func (Polynomials) Add(a, b Polynomial) Polynomial { return a.Add(b) }
 func (Polynomials) Mul(a, b Polynomial) Polynomial { return a.Mul(b) }
 
 // RankPolynomial returns the rank generating function Σ q^height over all
-// matchings: its coefficient of q^h counts the matchings with h flipped tiles, its value at 1
-// all of them. It returns [ErrTooLong] past [MaxRankedTiles] tiles.
-// Cost: O(n²) additions of numbers of up to 0.7n bits for n tiles.
-func (g Graph) RankPolynomial() (Polynomial, error) {
-	if _, err := g.layout("rank polynomial", MaxRankedTiles); err != nil {
-		return Polynomial{}, err
-	}
-	return Weigh(Polynomials{}, g, Weights[Polynomial]{Tile: rankWeight})
-}
+// matchings: its coefficient of q^h counts the matchings with h flipped tiles,
+// its value at 1 all of them. It returns [ErrTooLong] past [MaxRankedTiles]
+// tiles. Cost: O(n²) additions of numbers of up to 0.7n bits for n tiles.
+func (g Graph) RankPolynomial() (Polynomial, error) { return rankPolynomial(g, g.Tiles()) }
 
 // RankPolynomial returns the rank generating function of the good matchings.
 // It returns [ErrTooLong] past [MaxRankedTiles] tiles.
-func (b Band) RankPolynomial() (Polynomial, error) {
-	if _, err := b.layout("rank polynomial", MaxRankedTiles); err != nil {
-		return Polynomial{}, err
-	}
-	return WeighBand(Polynomials{}, b, Weights[Polynomial]{Tile: rankWeight})
-}
+func (b Band) RankPolynomial() (Polynomial, error) { return rankPolynomial(b, b.Tiles()) }
 
-// rankWeight weighs every flipped tile q.
-func rankWeight(int) Polynomial { return Polynomial{[]*big.Int{zeroInt, big.NewInt(1)}} }
+// RankPolynomial returns Σ q^height over the matchings of the set. It returns
+// [ErrTooLong] past [MaxRankedTiles] tiles.
+func (t Set) RankPolynomial() (Polynomial, error) { return rankPolynomial(t, t.Tiles()) }
+
+func rankPolynomial(g Matched, tiles int) (Polynomial, error) {
+	if tiles > MaxRankedTiles {
+		return Polynomial{}, fmt.Errorf("snake: rank polynomial of %s: at most %d are accepted: %w", tileCount(tiles), MaxRankedTiles, ErrTooLong)
+	}
+	q := Polynomial{[]*big.Int{zeroInt, big.NewInt(1)}}
+	return Weigh(Polynomials{}, g, Weights[Polynomial]{Tile: func(int) Polynomial { return q }})
+}

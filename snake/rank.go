@@ -21,7 +21,8 @@ type completions struct {
 	total [2]*big.Int
 }
 
-// ranking returns the table of completions, worked out at the first use of the set.
+// ranking returns the table of completions, worked out at the first use of the
+// set.
 func (t Set) ranking(what string) (*completions, error) {
 	if n := t.s.n; n > MaxRankedTiles {
 		return nil, fmt.Errorf("snake: %s among the matchings of %s: at most %d are accepted: %w", what, tileCount(n), MaxRankedTiles, ErrTooLong)
@@ -58,8 +59,8 @@ func (t Set) ranking(what string) (*completions, error) {
 
 // Rank returns the position of a matching in the order of [Set.All], counted
 // from 0. It returns [ErrNotMatching] when the matching does not belong to the
-// set and [ErrTooLong] past [MaxRankedTiles] tiles.
-// Cost: O(tiles) additions, and as many again the first time.
+// set and [ErrTooLong] past [MaxRankedTiles] tiles. Cost: O(tiles) additions,
+// and as many again the first time.
 func (t Set) Rank(m Matching) (*big.Int, error) {
 	if !t.Contains(m) {
 		return nil, notIn("rank", m, t)
@@ -88,9 +89,9 @@ func (t Set) Rank(m Matching) (*big.Int, error) {
 	return rank, nil
 }
 
-// Unrank returns the matching at a position in the order of [Set.All], counted from
-// 0: the inverse of [Set.Rank]. It returns [ErrIndex] unless 0 ≤ rank < Count
-// (nil counts as 0) and [ErrTooLong] past [MaxRankedTiles] tiles.
+// Unrank returns the matching at a position in the order of [Set.All], counted
+// from 0: the inverse of [Set.Rank]. It returns [ErrIndex] unless 0 ≤ rank <
+// Count (nil counts as 0) and [ErrTooLong] past [MaxRankedTiles] tiles.
 func (t Set) Unrank(rank *big.Int) (Matching, error) {
 	if rank == nil {
 		rank = new(big.Int)
@@ -156,13 +157,17 @@ func notIn(what string, m Matching, t Set) error {
 }
 
 // Sample returns a matching of the set, each with exactly the same probability,
-// provided the source's bits are uniform and independent. Any
-// source of math/rand/v2 will do, a *rand.Rand as well. It returns [ErrIndex] when the set is
-// empty and [ErrTooLong] past [MaxRankedTiles] tiles.
+// provided the source's bits are uniform and independent. Any source of
+// math/rand/v2 will do, a *rand.Rand as well. It returns [ErrIndex] when the
+// set is empty, [ErrNoSource] for a nil source and [ErrTooLong] past
+// [MaxRankedTiles] tiles.
 //
 // It draws a uniform index by rejection, fewer than two tries on average, and
 // unranks it.
 func (t Set) Sample(source rand.Source) (Matching, error) {
+	if source == nil {
+		return Matching{}, fmt.Errorf("snake: sample without a source of random bits: %w", ErrNoSource)
+	}
 	count := t.small()
 	if count == nil {
 		c, err := t.ranking("sample")

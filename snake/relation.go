@@ -14,8 +14,8 @@ import (
 //
 //	Product[0] · Product[1] = First[0] · First[1] + Second[0] · Second[1]
 //
-// where every letter stands for [Graph.Count]. In a cluster algebra these are the skein
-// relations of two arcs with the two ways to smooth their crossing.
+// where every letter stands for [Graph.Count]. In a cluster algebra these are
+// the skein relations of two arcs with the two ways to smooth their crossing.
 type Relation struct{ Product, First, Second [2]Graph }
 
 // Sides returns the numbers on both sides of the relation; they are equal in
@@ -31,12 +31,13 @@ func (r Relation) Sides() (left, right *big.Int) {
 //
 //	g · h = (g turn h) · edge + g″ · h″
 //
-// First[0] is the grafted graph, First[1] the single edge; Second holds what is left of g and h when
-// their tiles at the glue are flipped the one way that the letter forbids. For
-// continued fractions this is K(a…b) · K(c…d) = K(a…b, c…d) + …, the classical identity of continuants.
-// Labels are dropped. It returns [ErrNoTile] for a single edge, which has no tile to glue.
-// Cost: O(runs).
-// Source: "Cluster algebras and continued fractions", Compositio Math. 154 (2018).
+// First[0] is the grafted graph, First[1] the single edge; Second holds what is
+// left of g and h when their tiles at the glue are flipped the one way that the
+// letter forbids. For continued fractions this is K(a…b) · K(c…d) = K(a…b, c…d)
+// + …, the classical identity of continuants. Labels are dropped. It returns
+// [ErrNoTile] for a single edge, which has no tile to glue. Cost: O(runs).
+// Source: "Cluster algebras and continued fractions", Compositio Math. 154
+// (2018).
 func Graft(g, h Graph, turn contfrac.Letter) (Relation, error) {
 	u, okU := g.Word()
 	v, okV := h.Word()
@@ -44,8 +45,8 @@ func Graft(g, h Graph, turn contfrac.Letter) (Relation, error) {
 		return Relation{}, fmt.Errorf("snake: graft of %v and %v: both need a tile: %w", g, h, ErrNoTile)
 	}
 	// With the letter R the forbidden flip is h's first tile without g's last
-	// one; it forces all of g's tiles over the last one down and all of h's below the first one up. Both
-	// runs consist of the other letter.
+	// one; it forces all of g's tiles over the last one down and all of h's
+	// below the first one up. Both runs consist of the other letter.
 	var b contfrac.WordBuilder
 	b.AppendWord(u)
 	b.Append(turn, 1)
@@ -59,8 +60,8 @@ func Graft(g, h Graph, turn contfrac.Letter) (Relation, error) {
 }
 
 // forced is what remains of a graph whose first tile is fixed, when a run of
-// the given letter at the start of its word hands the flip on: without the run, the tiles on
-// it, and the letter behind it, across which nothing is forced.
+// the given letter at the start of its word hands the flip on: without the run,
+// the tiles on it, and the letter behind it, across which nothing is forced.
 func forced(w contfrac.Word, handsOn contfrac.Letter) Graph {
 	var b contfrac.WordBuilder
 	start := true
@@ -83,17 +84,19 @@ func forced(w contfrac.Word, handsOn contfrac.Letter) Graph {
 }
 
 // Overlap is a common piece of two snake graphs: Tiles tiles, from tile First
-// of the one and from tile Second of the other on, with the same letters between them.
+// of the one and from tile Second of the other on, with the same letters
+// between them.
 type Overlap struct{ First, Second, Tiles int }
 
 // MaxOverlapTiles is the largest number of tiles of graphs whose overlaps are
 // looked for, since all pairs of tiles are compared.
 const MaxOverlapTiles = 1 << 13
 
-// Overlaps yields the overlaps in which two graphs cross, those that [Resolve] accepts: maximal common pieces
-// at whose two ends the letters differ in opposite senses, where the end of a graph counts as
-// whichever letter is needed. Order: by first tile in g, then in h. It returns
-// [ErrTooLong] past [MaxOverlapTiles] tiles. The iterator can be run again.
+// Overlaps yields the overlaps in which two graphs cross, those that [Resolve]
+// accepts: maximal common pieces at whose two ends the letters differ in
+// opposite senses, where the end of a graph counts as whichever letter is
+// needed. Order: by first tile in g, then in h. It returns [ErrTooLong] past
+// [MaxOverlapTiles] tiles. The iterator can be run again.
 func Overlaps(g, h Graph) (iter.Seq[Overlap], error) {
 	u, v, err := overlapWords(g, h)
 	if err != nil {
@@ -136,8 +139,8 @@ func overlapWords(g, h Graph) (u, v string, err error) {
 	return words[0], words[1], nil
 }
 
-// crosses reports whether a maximal overlap is a crossing: with the letters x, x′ before and
-// y, y′ behind it, x and y differ.
+// crosses reports whether a maximal overlap is a crossing: with the letters x,
+// x′ before and y, y′ behind it, x and y differ.
 func crosses(u, v string, o Overlap) bool {
 	before, behind := endLetter(u, v, o.First-2, o.Second-2), endLetter(u, v, o.First+o.Tiles-2, o.Second+o.Tiles-2)
 	return before != 0 && behind != 0 && before != behind
@@ -155,18 +158,20 @@ func endLetter(u, v string, i, j int) byte {
 	return 'L' + 'R' - v[j]
 }
 
-// Resolve smooths the crossing of two snake graphs in an overlap and returns the identity
+// Resolve smooths the crossing of two snake graphs in an overlap and returns
+// the identity
 //
 //	g · h = g′ · h′ + e · f
 //
-// First holds the two graphs that change over at the overlap: g up to its end and h from there
-// on, and the other way round. Second joins the two starts, and the two ends, without the overlap.
-// Labels are dropped.
+// First holds the two graphs that change over at the overlap: g up to its end
+// and h from there on, and the other way round. Second joins the two starts,
+// and the two ends, without the overlap. Labels are dropped.
 //
 // It returns [ErrNoTile] when a graph does not have the tiles, [ErrNotCrossing]
 // when the overlap is not common, not maximal, or no crossing, and [ErrTooLong]
 // past [MaxOverlapTiles] tiles.
-// Source: "Snake graph calculus and cluster algebras from surfaces", J. Algebra 382 (2013).
+// Source: "Snake graph calculus and cluster algebras from surfaces", J. Algebra
+// 382 (2013).
 func Resolve(g, h Graph, o Overlap) (Relation, error) {
 	u, v, err := overlapWords(g, h)
 	if err != nil {
@@ -190,9 +195,10 @@ func Resolve(g, h Graph, o Overlap) (Relation, error) {
 	}, nil
 }
 
-// joined is the graph that joins two ends b and d which begin with different letters: b turned
-// round, with its first letter in the middle, and d without its own; where one of them is empty, what
-// the other one's first letter leaves unforced.
+// joined is the graph that joins two ends b and d which begin with different
+// letters: b turned round, with its first letter in the middle, and d without
+// its own; where one of them is empty, what the other one's first letter leaves
+// unforced.
 //
 // In matrices: N(aOb)·N(cOd) − N(aOd)·N(cOb) = det(a, c)·det(b, d), with the
 // rows a, c and the columns b, d that the ends contribute; each of the two

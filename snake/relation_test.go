@@ -1,6 +1,7 @@
 package snake_test
 
 import (
+	"math"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -46,7 +47,8 @@ func TestResolvingIsAnIdentity(t *testing.T) {
 	assert.Positive(t, resolved)
 }
 
-// All pairs of short words, all pieces: exactly the ones that Overlaps yields are resolved.
+// All pairs of short words, all pieces: exactly the ones that Overlaps yields
+// are resolved.
 func TestResolveAcceptsExactlyTheOverlaps(t *testing.T) {
 	for _, u := range plainWords(3) {
 		for _, v := range append(plainWords(2), plainWords(4)...) {
@@ -71,4 +73,25 @@ func TestResolveAcceptsExactlyTheOverlaps(t *testing.T) {
 			}
 		}
 	}
+}
+
+func TestRelationsRefuse(t *testing.T) {
+	g, h := snake.FromWord(mustWord("RLR")), snake.FromWord(mustWord("LLRR"))
+	for _, pair := range [][2]snake.Graph{{g, snake.Edge()}, {snake.Edge(), g}} {
+		_, err := snake.Graft(pair[0], pair[1], contfrac.L)
+		assert.ErrorIs(t, err, snake.ErrNoTile)
+		_, err = snake.Resolve(pair[0], pair[1], snake.Overlap{First: 1, Second: 1, Tiles: 1})
+		assert.ErrorIs(t, err, snake.ErrNoTile)
+		overlaps, err := snake.Overlaps(pair[0], pair[1])
+		require.NoError(t, err)
+		for o := range overlaps {
+			t.Errorf("%v on a single edge", o)
+		}
+	}
+	for _, o := range []snake.Overlap{{}, {First: -1, Second: 1, Tiles: 1}, {First: 1, Second: 1, Tiles: 9}, {First: math.MaxInt, Second: 1, Tiles: 2}, {First: 4, Second: 1, Tiles: 2}} {
+		_, err := snake.Resolve(g, h, o)
+		assert.ErrorIs(t, err, snake.ErrNoTile)
+	}
+	_, err := snake.Resolve(g, h, snake.Overlap{First: 1, Second: 1, Tiles: 2})
+	assert.ErrorIs(t, err, snake.ErrNotCrossing)
 }

@@ -32,8 +32,9 @@ func orZero(a *big.Int) *big.Int {
 	return a
 }
 
-// Modular is the ring of integers modulo a positive integer, its elements from 0 to m − 1.
-// Arguments outside are reduced; a nil element counts as 0. The zero value is the ring modulo 1, in which everything is 0.
+// Modular is the ring of integers modulo a positive integer, its elements from
+// 0 to m − 1. Arguments outside are reduced; a nil element counts as 0. The
+// zero value is the ring modulo 1, in which everything is 0.
 type Modular struct{ m *big.Int }
 
 // NewModular returns the ring of integers modulo m. It returns [ErrModulus]
@@ -87,9 +88,10 @@ func (Floats) Add(a, b float64) float64 { return a + b }
 // Mul returns ab.
 func (Floats) Mul(a, b float64) float64 { return a * b }
 
-// MaxPlus is the semiring of real numbers and −∞ under maximum and addition, in float64: the
-// weight of a graph in it is the weight of a heaviest matching, and the tropical
-// value of its Laurent expansion. The element +∞ is not accepted, as −∞ + ∞ has no value.
+// MaxPlus is the semiring of real numbers and −∞ under maximum and addition, in
+// float64: the weight of a graph in it is the weight of a heaviest matching,
+// and the tropical value of its Laurent expansion. The element +∞ is not
+// accepted, as −∞ + ∞ has no value.
 type MaxPlus struct{}
 
 // Zero returns −∞.

@@ -6,9 +6,9 @@ import (
 	"math/big"
 )
 
-// Set is a set of perfect matchings of one graph or band: all of them, or those with
-// given tiles flipped or not and given edges used or not. It is never written out:
-// counting, listing, ranking and sampling work on its description.
+// Set is a set of perfect matchings of one graph or band: all of them, or those
+// with given tiles flipped or not and given edges used or not. It is never
+// written out: counting, listing, ranking and sampling work on its description.
 //
 // A Set is immutable and safe for concurrent use. The zero value is the set of
 // the single edge's one matching.
@@ -50,7 +50,8 @@ func (t Set) mask(tile int) uint8 {
 	return t.allow[tile-1]
 }
 
-// only returns the set with the steps of one tile limited to those that a test accepts.
+// only returns the set with the steps of one tile limited to those that a test
+// accepts.
 func (t Set) only(tile int, accept func(step) bool) Set {
 	allow := make([]uint8, t.s.n)
 	for i := range allow {
@@ -154,7 +155,8 @@ func (t Set) Contains(m Matching) bool {
 }
 
 // pass follows a matching through the tiles from a start state by allowed
-// steps, tells the edges it takes, and returns the state at the end, or false when no step fits.
+// steps, tells the edges it takes, and returns the state at the end, or false
+// when no step fits.
 func (t Set) pass(m Matching, at state, take func(Side) bool) (state, bool) {
 tiles:
 	for i := 1; i <= t.s.n; i++ {

@@ -1,6 +1,7 @@
 package snake_test
 
 import (
+	"iter"
 	"math"
 	"math/big"
 	"math/rand/v2"
@@ -35,7 +36,7 @@ func sets(most int) *rapid.Generator[restricted] {
 			edges = slices.Collect(b.Edges())
 		}
 		require.NoError(t, err)
-		r := restricted{whole: set, set: set, ok: func(snake.Matching) bool { return true }}
+		r := restricted{whole: set, set: set, edges: slices.Values(edges), ok: func(snake.Matching) bool { return true }}
 		for range rapid.IntRange(0, 3).Draw(t, "restrictions") {
 			before, want := r.ok, rapid.Bool().Draw(t, "want")
 			if rapid.Bool().Draw(t, "by tile") {
@@ -58,6 +59,7 @@ func sets(most int) *rapid.Generator[restricted] {
 
 type restricted struct {
 	whole, set snake.Set
+	edges      iter.Seq[snake.Side]
 	ok         func(snake.Matching) bool
 }
 
@@ -172,9 +174,9 @@ func TestLongListingGoesUpByOne(t *testing.T) {
 	})
 }
 
-// Chi-squared test with a fixed seed, on a snake and on a restricted band: the statistic of n equally
-// likely matchings exceeds n − 1 + 4·√(2(n − 1)) with probability below 0.001
-// (common practice).
+// Chi-squared test with a fixed seed, on a snake and on a restricted band: the
+// statistic of n equally likely matchings exceeds n − 1 + 4·√(2(n − 1)) with
+// probability below 0.001 (common practice).
 func TestSamplingIsUniform(t *testing.T) {
 	whole, err := snake.FromWord(mustWord("RLLR")).Set()
 	require.NoError(t, err)
@@ -222,6 +224,8 @@ func TestSetOfTheSingleEdge(t *testing.T) {
 		assert.ErrorIs(t, err, snake.ErrIndex)
 		_, err = s.Sample(rand.NewPCG(1, 1))
 		assert.NoError(t, err)
+		_, err = s.Sample(nil)
+		assert.ErrorIs(t, err, snake.ErrNoSource)
 		_, err = s.Minimal()
 		assert.NoError(t, err)
 	}

@@ -32,9 +32,6 @@ func (d Direction) String() string {
 	return "up"
 }
 
-// other returns the direction that d is not.
-func (d Direction) other() Direction { return d ^ 1 }
-
 // entry is the face of a tile by which a glue in direction d comes in.
 func (d Direction) entry() Face {
 	if d == Right {

@@ -5,11 +5,13 @@ import (
 	"html"
 	"math"
 	"strings"
+	"unicode"
 )
 
-// The look of the pictures. Tints and inks go by label; neighbours in these lists
-// differ in hue (safe for the common colour blindnesses) and in lightness (so they stay
-// apart in grey print), and every ink has its own dash pattern besides.
+// The look of the pictures. Tints and inks go by label; neighbours in these
+// lists differ in hue (safe for the common colour blindnesses) and in lightness
+// (so they stay apart in grey print), and every ink has its own dash pattern
+// besides.
 var (
 	tints  = []string{"#ffffff", "#f7e3b5", "#b9d4e6", "#dcdfe3", "#f2c9ae", "#cfe3c8"}
 	inks   = []string{"#7b8794", "#a86b00", "#13507d", "#4a5568", "#b3401f", "#2f6b3a"}
@@ -34,8 +36,9 @@ func shade(l Label) int {
 	return 1 + (int(l)-1)%(len(tints)-1)
 }
 
-// SVG draws the graph as a self-contained SVG image: tiles tinted by the label of
-// their diagonal, diagonals dashed in a pattern of the label, and what the Drawing asks for.
+// SVG draws the graph as a self-contained SVG image: tiles tinted by the label
+// of their diagonal, diagonals dashed in a pattern of the label, and what the
+// Drawing asks for.
 //
 // It returns [ErrTooLong] past [MaxDrawnTiles] tiles and [ErrNotMatching] for a
 // matching of another graph.
@@ -47,8 +50,9 @@ func (g Graph) SVG(d Drawing) (string, error) {
 	return p.svg(g.describe("%v")), nil
 }
 
-// SVG draws the band, cut between its last and its first tile: the two copies of
-// the cut edge are dashed and marked with arrows of one kind. Errors as for [Graph.SVG].
+// SVG draws the band, cut between its last and its first tile: the two copies
+// of the cut edge are dashed and marked with arrows of one kind. Errors as for
+// [Graph.SVG].
 func (b Band) SVG(d Drawing) (string, error) {
 	p, err := b.picture(d)
 	if err != nil {
@@ -108,7 +112,18 @@ func (c *canvas) polygon(s []spot, attributes string) {
 // text writes a text centred at a spot, with a halo of the given colour.
 func (c *canvas) text(s spot, size float64, ink, halo, text string) {
 	c.add(`<text x="%s" y="%s" dy=".35em" font-size="%s" fill="%s" stroke="%s" stroke-width="%s" paint-order="stroke" stroke-linejoin="round" text-anchor="middle">%s</text>`,
-		c.x(s), c.y(s), decimal(size), ink, halo, decimal(size/4), html.EscapeString(text))
+		c.x(s), c.y(s), decimal(size), ink, halo, decimal(size/4), escape(text))
+}
+
+// escape makes a text safe inside an XML element: characters that XML does not
+// have become question marks.
+func escape(text string) string {
+	return html.EscapeString(strings.Map(func(r rune) rune {
+		if r < ' ' || r == unicode.ReplacementChar || r >= 0xFFFE && r <= 0xFFFF {
+			return '?'
+		}
+		return r
+	}, text))
 }
 
 // arrow marks a copy of a cut edge: both copies are glued as the arrows point,
@@ -131,10 +146,11 @@ func (c *canvas) document(width, height float64, title string) string {
 <defs><pattern id="flip" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)"><line x1="0" y1="0" x2="0" y2="7" stroke="%s" stroke-width="1.6" stroke-opacity=".38"/></pattern></defs>
 <rect width="100%%" height="100%%" fill="%s"/>
 %s</svg>
-`, decimal(width), decimal(height), decimal(width), decimal(height), html.EscapeString(title), hatch, paper, c.String())
+`, decimal(width), decimal(height), decimal(width), decimal(height), escape(title), hatch, paper, c.String())
 }
 
-// draw draws a laid out graph: tiles, hatching, diagonals, edges, vertices and texts, in this order.
+// draw draws a laid out graph: tiles, hatching, diagonals, edges, vertices and
+// texts, in this order.
 func (c *canvas) draw(p *picture) {
 	u := c.unit
 	for i := 1; i <= len(p.tiles); i++ {

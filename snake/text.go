@@ -9,12 +9,12 @@ import (
 	"example.com/onecusp/contfrac"
 )
 
-// String describes the graph in one line, with the whole word by runs: "snake
-// graph, 4 tiles: R L2". The verb %v shortens long words. [Graph.Text] draws.
+// String describes the graph in one line, with its whole word: "snake graph,
+// 4 tiles: RLL". The verb %v shortens long words. [Graph.Text] draws.
 func (g Graph) String() string { return g.describe("%s") }
 
-// Format implements fmt.Formatter: %s writes what String returns, %q quotes it, %v and
-// every other verb shorten a long word.
+// Format implements fmt.Formatter: %s writes what String returns, %q quotes it,
+// %v and every other verb shorten a long word.
 func (g Graph) Format(f fmt.State, verb rune) { formatAs(f, verb, g.describe) }
 
 // formatAs prints a description in full for %s and %q, shortened otherwise.
@@ -44,16 +44,13 @@ func describeTiles(w contfrac.Word, verb string) string {
 	}
 	n := w.Len()
 	n.Add(n, big.NewInt(1))
-	if verb == "%v" {
-		return fmt.Sprintf("%s tiles: %v", contfrac.Abbreviate(n), w)
-	}
-	return fmt.Sprintf("%s tiles: %s", n, w.Compact())
+	return fmt.Sprintf("%s tiles: "+verb, contfrac.Abbreviate(n), w)
 }
 
 // Text draws the graph with box characters, one row of tiles to two lines,
-// matched edges heavy and flipped tiles shaded at their corners. Of names, three characters fit into a tile.
-// It returns [ErrTooLong] past [MaxDrawnTiles] tiles and [ErrNotMatching] for a
-// matching of another graph.
+// matched edges heavy and flipped tiles shaded at their corners. Of names,
+// three characters fit into a tile. It returns [ErrTooLong] past
+// [MaxDrawnTiles] tiles and [ErrNotMatching] for a matching of another graph.
 func (g Graph) Text(d Drawing) (string, error) {
 	p, err := g.picture(d)
 	if err != nil {
@@ -62,8 +59,9 @@ func (g Graph) Text(d Drawing) (string, error) {
 	return p.text(), nil
 }
 
-// Text draws the band, cut between its last and its first tile: the two copies of the cut
-// edge are dotted, or heavy both when it is matched. Errors as for [Graph.Text].
+// Text draws the band, cut between its last and its first tile: the two copies
+// of the cut edge are dotted, or heavy both when it is matched. Errors as for
+// [Graph.Text].
 func (b Band) Text(d Drawing) (string, error) {
 	p, err := b.picture(d)
 	if err != nil {

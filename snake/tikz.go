@@ -6,8 +6,8 @@ import (
 )
 
 // TikZ draws the graph as a tikzpicture environment for LaTeX; a document needs
-// the package tikz and nothing else. Names are written into it as they are, so they may hold
-// LaTeX, and must be valid there.
+// the package tikz and nothing else. Names are written into it as they are, so
+// they may hold LaTeX, and must be valid there.
 //
 // Flipped tiles are shaded. Errors as for [Graph.SVG].
 func (g Graph) TikZ(d Drawing) (string, error) {
@@ -45,7 +45,7 @@ func (p *picture) tikz() string {
 		}
 		return strings.Join(parts, " -- ")
 	}
-	b.WriteString("\\begin{tikzpicture}[line join=round]\n")
+	b.WriteString("\\begin{tikzpicture}[x=1.4cm, y=1.4cm, line join=round]\n")
 	for k := range tints {
 		line(`\definecolor{tint%d}{HTML}{%s}`, k, strings.ToUpper(tints[k][1:]))
 		line(`\definecolor{ink%d}{HTML}{%s}`, k, strings.ToUpper(inks[k][1:]))
@@ -75,13 +75,13 @@ func (p *picture) tikz() string {
 		line(`\draw[%s] %s;`, style, path([]spot{p.at(e.from), p.at(e.to)}))
 	}
 	for _, v := range p.vertices() {
-		line(`\fill %s circle (.05);`, at(p.at(v)))
+		line(`\fill %s circle (.04);`, at(p.at(v)))
 	}
 	p.texts(func(s spot, l Label, text string, edge bool) {
 		if edge {
 			line(`\node[ink%d, fill=white, inner sep=.6pt, font=\tiny] at %s {%s};`, shade(l), at(s), text)
 		} else {
-			line(`\node[fill=tint%d, inner sep=1pt, font=\small] at %s {%s};`, shade(l), at(s), text)
+			line(`\node[fill=tint%d, fill opacity=.75, text opacity=1, inner sep=1pt] at %s {%s};`, shade(l), at(s), text)
 		}
 	})
 	b.WriteString("\\end{tikzpicture}\n")

@@ -61,8 +61,9 @@ func (g Graph) AllTiles() iter.Seq[Tile] {
 	return s.walk()
 }
 
-// AllTiles yields the tiles from the first to the last, as they lie when the band is cut
-// between the last and the first. It can be run again. A band of more than [MaxTiles] tiles yields nothing.
+// AllTiles yields the tiles from the first to the last, as they lie when the
+// band is cut between the last and the first. It can be run again. A band of
+// more than [MaxTiles] tiles yields nothing.
 func (b Band) AllTiles() iter.Seq[Tile] {
 	s, _ := b.layout("tiles", MaxTiles)
 	return s.walk()
@@ -81,8 +82,8 @@ func (g Graph) Edges() iter.Seq[Side] {
 }
 
 // Edges yields the edges of the band, 3n for n tiles, each once; the glue
-// between the last tile and the first belongs to the last. It can be run again. A band of more than
-// [MaxTiles] tiles yields nothing.
+// between the last tile and the first belongs to the last. It can be run again.
+// A band of more than [MaxTiles] tiles yields nothing.
 func (b Band) Edges() iter.Seq[Side] {
 	t, err := b.Set()
 	if err != nil {

@@ -69,21 +69,22 @@ const allSteps = 0b111
 // at returns the steps of a tile.
 func (s *shape) at(tile int) *[3]step { return &steps[s.dir[tile-1]][s.dir[tile]] }
 
-// after returns the state behind a tile that is or is not flipped; a tile's
-// flip decides it, whatever came before.
+// after returns the state behind a tile that is or is not flipped; the flip
+// decides it, whatever came before. The first two steps of a tile have
+// different flips.
 func (s *shape) after(tile int, up bool) state {
-	for _, t := range s.at(tile) {
-		if flipped(tile, t.vertical) == up {
-			return t.to
-		}
+	t := s.at(tile)
+	if flipped(tile, t[0].vertical) == up {
+		return t[0].to
 	}
-	panic("unreachable: every tile has a step of either kind")
+	return t[1].to
 }
 
 // product is the product of the transfer matrices of tiles first … last,
 // with only the steps allowed (nil: all). allow[i−1] is the mask of tile i.
 func (s *shape) product(first, last int, allow []uint8) contfrac.Matrix {
-	// A product of 64 of these matrices has entries below 2⁶⁴: they are at most Fibonacci numbers.
+	// A product of 64 of these matrices has entries below 2⁶⁴: they are at most
+	// Fibonacci numbers.
 	const leaf = 64
 	if last-first < leaf {
 		m := [2][2]uint64{{1, 0}, {0, 1}}
@@ -132,8 +133,9 @@ const allEnds = 1<<free | 1<<covered
 //
 // A graph in run form is counted by the matrix of its word, in O(runs) big
 // multiplications; a graph made by a [Builder] on its vertices and edges, by a
-// balanced product of one transfer matrix for each tile. Both cost a small multiple of
-// one multiplication of two numbers of half the size of the result, times log.
+// balanced product of one transfer matrix for each tile. Both cost a small
+// multiple of one multiplication of two numbers of half the size of the result,
+// times log.
 func (g Graph) Count() *big.Int {
 	switch g.form {
 	case singleEdge:

@@ -43,19 +43,22 @@ func weightOf[T any](r snake.Semiring[T], set snake.Set, m snake.Matching, edge 
 }
 
 // checkWeight compares a transfer over a semiring with the sum over the list.
-func checkWeight[T any](t *rapid.T, r snake.Semiring[T], set snake.Set, got func(snake.Weights[T]) (T, error), edge func(snake.Side) T, tile func(int) T, equal func(a, b T) bool) {
+func checkWeight[T any](t *rapid.T, r snake.Semiring[T], g snake.Matched, edge func(snake.Side) T, tile func(int) T, equal func(a, b T) bool) {
+	set, err := g.Set()
+	require.NoError(t, err)
 	sum := r.Zero()
 	for m := range set.All() {
 		sum = r.Add(sum, weightOf(r, set, m, edge, tile))
 	}
-	w, err := got(snake.Weights[T]{Edge: edge, Tile: tile})
+	w, err := snake.Weigh(r, g, snake.Weights[T]{Edge: edge, Tile: tile})
 	require.NoError(t, err)
 	require.True(t, equal(sum, w), "%v, by listing %v", w, sum)
 }
 
 func sameInt(a, b *big.Int) bool { return a.Cmp(b) == 0 }
 
-// In every semiring, on snakes and on bands, the weight is the sum over the list.
+// In every semiring, on snakes, bands and restricted sets, the weight is the
+// sum over the list.
 func TestWeightIsTheSumOverMatchings(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		word := words(9).Draw(t, "word")
@@ -63,62 +66,42 @@ func TestWeightIsTheSumOverMatchings(t *testing.T) {
 		if word == "" && rapid.Bool().Draw(t, "edge") {
 			g = snake.EdgeWithLabel(3)
 		}
-		set, err := g.Set()
-		require.NoError(t, err)
 		edges, tiles := weightsFor(t, g.Edges(), g.Tiles())
-		checkAll(t, set, edges, tiles, graphWeigher{g})
+		checkAll(t, edges, tiles, g)
 
 		b, err := snake.BandFromWord(mustWord("LR" + word))
 		require.NoError(t, err)
-		set, err = b.Set()
-		require.NoError(t, err)
 		edges, tiles = weightsFor(t, b.Edges(), b.Tiles())
-		checkAll(t, set, edges, tiles, bandWeigher{b})
+		checkAll(t, edges, tiles, b)
+
+		r := sets(8).Draw(t, "set")
+		edges, tiles = weightsFor(t, r.edges, r.set.Tiles())
+		checkAll(t, edges, tiles, r.set)
 	})
 }
 
-type graphWeigher struct{ g snake.Graph }
-type bandWeigher struct{ b snake.Band }
-
-type weigher interface {
-	graph() (*snake.Graph, *snake.Band)
-}
-
-func (w graphWeigher) graph() (*snake.Graph, *snake.Band) { return &w.g, nil }
-func (w bandWeigher) graph() (*snake.Graph, *snake.Band)  { return nil, &w.b }
-
-func weigh[T any](w weigher, r snake.Semiring[T]) func(snake.Weights[T]) (T, error) {
-	return func(x snake.Weights[T]) (T, error) {
-		if g, b := w.graph(); g != nil {
-			return snake.Weigh(r, *g, x)
-		} else {
-			return snake.WeighBand(r, *b, x)
-		}
-	}
-}
-
-func checkAll(t *rapid.T, set snake.Set, edges map[snake.Side]int64, tiles []int64, w weigher) {
+func checkAll(t *rapid.T, edges map[snake.Side]int64, tiles []int64, g snake.Matched) {
 	integer := func(x int64) *big.Int { return big.NewInt(x) }
-	checkWeight(t, snake.Integers{}, set, weigh(w, snake.Integers{}),
+	checkWeight(t, snake.Integers{}, g,
 		func(e snake.Side) *big.Int { return integer(edges[e]) }, func(i int) *big.Int { return integer(tiles[i]) }, sameInt)
 	mod, err := snake.NewModular(big.NewInt(12))
 	require.NoError(t, err)
-	checkWeight(t, mod, set, weigh(w, mod),
+	checkWeight(t, mod, g,
 		func(e snake.Side) *big.Int { return integer(edges[e]) }, func(i int) *big.Int { return integer(tiles[i]) }, sameInt)
-	checkWeight(t, snake.Floats{}, set, weigh(w, snake.Floats{}),
+	checkWeight(t, snake.Floats{}, g,
 		func(e snake.Side) float64 { return float64(edges[e]) }, func(i int) float64 { return float64(tiles[i]) },
 		func(a, b float64) bool { return math.Abs(a-b) <= 1e-9*math.Abs(a) })
-	checkWeight(t, snake.MaxPlus{}, set, weigh(w, snake.MaxPlus{}),
+	checkWeight(t, snake.MaxPlus{}, g,
 		func(e snake.Side) float64 { return float64(edges[e] - 2) }, func(i int) float64 { return float64(tiles[i] - 2) },
 		func(a, b float64) bool { return a == b })
-	checkWeight(t, snake.Booleans{}, set, weigh(w, snake.Booleans{}),
+	checkWeight(t, snake.Booleans{}, g,
 		func(e snake.Side) bool { return edges[e] > 1 }, func(i int) bool { return tiles[i] > 0 },
 		func(a, b bool) bool { return a == b })
-	checkWeight(t, snake.Polynomials{}, set, weigh(w, snake.Polynomials{}),
+	checkWeight(t, snake.Polynomials{}, g,
 		func(e snake.Side) snake.Polynomial { return snake.NewPolynomial(integer(edges[e]), integer(1)) },
 		func(i int) snake.Polynomial { return snake.NewPolynomial(integer(tiles[i]-2), nil, integer(3)) },
 		snake.Polynomial.Equal)
-	checkWeight(t, snake.Laurents{}, set, weigh(w, snake.Laurents{}),
+	checkWeight(t, snake.Laurents{}, g,
 		func(e snake.Side) snake.Laurent { return monomial(t, edges[e], e.Tile, -1) },
 		func(i int) snake.Laurent { return monomial(t, tiles[i]-2, -i) },
 		snake.Laurent.Equal)
@@ -140,17 +123,27 @@ func TestWeightOneIsTheCount(t *testing.T) {
 		require.Equal(t, g.Count(), n)
 		b, err := snake.BandFromWord(mustWord("RL" + word))
 		require.NoError(t, err)
-		n, err = snake.WeighBand(snake.Integers{}, b, snake.Weights[*big.Int]{})
+		n, err = snake.Weigh(snake.Integers{}, b, snake.Weights[*big.Int]{})
 		require.NoError(t, err)
 		require.Equal(t, b.Count(), n)
 	})
+}
+
+func TestWeightOfTheSingleEdge(t *testing.T) {
+	g := snake.EdgeWithLabel(3)
+	w, err := snake.Weigh(snake.Floats{}, g, snake.Weights[float64]{})
+	require.NoError(t, err)
+	assert.Equal(t, 1.0, w)
+	w, err = snake.Weigh(snake.Floats{}, g, snake.Weights[float64]{Edge: func(e snake.Side) float64 { return float64(e.Label) / 2 }})
+	require.NoError(t, err)
+	assert.Equal(t, 1.5, w)
 }
 
 func TestWeighRefusesLongGraphs(t *testing.T) {
 	g, b := hugeGraph(), hugeBand()
 	_, err := snake.Weigh(snake.Booleans{}, g, snake.Weights[bool]{})
 	assert.ErrorIs(t, err, snake.ErrTooLong)
-	_, err = snake.WeighBand(snake.Booleans{}, b, snake.Weights[bool]{})
+	_, err = snake.Weigh(snake.Booleans{}, b, snake.Weights[bool]{})
 	assert.ErrorIs(t, err, snake.ErrTooLong)
 }
 
@@ -188,6 +181,18 @@ func TestRankPolynomialCountsHeights(t *testing.T) {
 			heights[m.Height()].Add(heights[m.Height()], big.NewInt(1))
 		}
 		require.True(t, snake.NewPolynomial(heights...).Equal(p))
+
+		set, err := g.Set()
+		require.NoError(t, err)
+		up, err := set.WithTile(1, true)
+		require.NoError(t, err)
+		down, err := set.WithTile(1, false)
+		require.NoError(t, err)
+		pUp, err := up.RankPolynomial()
+		require.NoError(t, err)
+		pDown, err := down.RankPolynomial()
+		require.NoError(t, err)
+		require.True(t, pUp.Add(pDown).Equal(p))
 
 		b, err := snake.BandFromWord(mustWord(word + "LR"))
 		require.NoError(t, err)

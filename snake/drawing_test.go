@@ -1,0 +1,280 @@
+package snake_test
+
+import (
+	"encoding/xml"
+	"errors"
+	"flag"
+	"io"
+	"os"
+	"path/filepath"
+	"strings"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+	"pgregory.net/rapid"
+
+	"example.com/onecusp/snake"
+)
+
+var update = flag.Bool("update", false, "write the golden pictures anew")
+
+// golden compares a picture with the file that pins it.
+func golden(t *testing.T, name, got string) {
+	t.Helper()
+	path := filepath.Join("testdata", name)
+	if *update {
+		require.NoError(t, os.WriteFile(path, []byte(got), 0o644))
+	}
+	want, err := os.ReadFile(path)
+	require.NoError(t, err)
+	require.Equal(t, string(want), got, "run with -update if the change is meant")
+}
+
+func className(l snake.Label) string { return []string{"", "0", "∞", "1"}[l%4] }
+
+// countElements reads an SVG image as XML and counts its elements by name.
+func countElements(t require.TestingT, svg string) map[string]int {
+	d := xml.NewDecoder(strings.NewReader(svg))
+	count := map[string]int{}
+	for {
+		token, err := d.Token()
+		if errors.Is(err, io.EOF) {
+			return count
+		}
+		require.NoError(t, err)
+		if e, ok := token.(xml.StartElement); ok {
+			count[e.Name.Local]++
+		}
+	}
+}
+
+// An SVG picture is well-formed and has as many elements as the graph has
+// parts; a matching hatches its flipped tiles; hexagons join tiles and change
+// nothing else.
+func TestSVGShowsEveryPart(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		s := slopes(9).Draw(t, "slope")
+		weights := [3]int{rapid.IntRange(0, 2).Draw(t, "k0"), rapid.IntRange(0, 2).Draw(t, "k∞"), rapid.IntRange(0, 2).Draw(t, "k1")}
+		g := arcGraph(s[0], s[1], weights)
+		n := g.Tiles()
+		set, err := g.Set()
+		require.NoError(t, err)
+		m, err := set.Sample(source{t})
+		require.NoError(t, err)
+		hexagons := 0
+		for range g.Hexagons() {
+			hexagons++
+		}
+		d := snake.Drawing{Name: className, EdgeNames: rapid.Bool().Draw(t, "edges")}
+		texts := n
+		if d.EdgeNames {
+			texts += 3*n + 1
+		}
+		flipped := 0
+		if rapid.Bool().Draw(t, "matching") {
+			d.Matching, flipped = &m, m.Height()
+		}
+		check := func(tiles, texts int) {
+			svg, err := g.SVG(d)
+			require.NoError(t, err)
+			count := countElements(t, svg)
+			require.Equal(t, tiles+flipped, count["polygon"])
+			require.Equal(t, n+3*n+1+1, count["line"]) // diagonals, edges, and one in the hatching
+			require.Equal(t, 2*n+2, count["circle"])
+			require.Equal(t, texts, count["text"])
+			heavy := strings.Count(svg, `stroke-linecap="round"`)
+			require.Equal(t, d.Matching != nil, heavy > 0)
+			if d.Matching != nil {
+				require.Equal(t, n+1, heavy)
+			}
+			tikz, err := g.TikZ(d)
+			require.NoError(t, err)
+			require.Equal(t, texts, strings.Count(tikz, `\node`))
+			require.Equal(t, n+3*n+1, strings.Count(tikz, `\draw`))
+			require.Equal(t, tiles+flipped+2*n+2, strings.Count(tikz, `\fill`))
+		}
+		check(n, texts)
+		d.Hexagons = true
+		check(n-hexagons, texts-hexagons)
+		d.Numbers = true
+		check(n-hexagons, texts)
+	})
+}
+
+// A plain text picture has every vertex once and, in heavy strokes, the matched
+// edges.
+func TestTextShowsEveryPart(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		g := snake.FromWord(mustWord(words(30).Draw(t, "word")))
+		set, err := g.Set()
+		require.NoError(t, err)
+		m, err := set.Sample(source{t})
+		require.NoError(t, err)
+		s, err := g.Text(snake.Drawing{Matching: &m})
+		require.NoError(t, err)
+		n := g.Tiles()
+		require.Equal(t, 2*n+2, strings.Count(s, "●"))
+		require.Equal(t, n+1, strings.Count(s, "━━━")+strings.Count(s, "┃"))
+		require.Equal(t, 2*n, strings.Count(s, "───")+strings.Count(s, "│"))
+		require.Equal(t, 2*m.Height(), strings.Count(s, "░"))
+	})
+}
+
+func TestBandPicturesShowTheCutTwice(t *testing.T) {
+	b := bandBuilt("RRLRL")
+	set, err := b.Set()
+	require.NoError(t, err)
+	for m := range b.Matchings() {
+		d := snake.Drawing{Matching: &m, Name: className, EdgeNames: true}
+		svg, err := b.SVG(d)
+		require.NoError(t, err)
+		count := countElements(t, svg)
+		assert.Equal(t, 5+m.Height()+2, count["polygon"])
+		assert.Equal(t, 5+16+1, count["line"])
+		assert.Equal(t, 5+16, count["text"])
+		edges, err := set.EdgesOf(m)
+		require.NoError(t, err)
+		cut := strings.Count(svg, "stroke-dasharray=\"3 4\"")
+		for _, e := range edges {
+			if e.Tile == 5 && e.Face == snake.North { // the last letter, L after an odd tile, glues upwards
+				assert.Zero(t, cut)
+				cut = 2
+			}
+		}
+		assert.Equal(t, 2, cut)
+		text, err := b.Text(d)
+		require.NoError(t, err)
+		assert.Equal(t, 12, strings.Count(text, "●"))
+		tikz, err := b.TikZ(d)
+		require.NoError(t, err)
+		assert.Equal(t, 5+16, strings.Count(tikz, `\draw`))
+	}
+	text, err := b.Text(snake.Drawing{})
+	require.NoError(t, err)
+	assert.Equal(t, 2, strings.Count(text, "┆")+strings.Count(text, "┄┄┄"))
+}
+
+func TestPicturesOfTheSingleEdge(t *testing.T) {
+	g := snake.EdgeWithLabel(2)
+	m := snake.Matching{}
+	d := snake.Drawing{Name: className, EdgeNames: true, Matching: &m}
+	svg, err := g.SVG(d)
+	require.NoError(t, err)
+	assert.Equal(t, 1, countElements(t, svg)["text"])
+	text, err := g.Text(d)
+	require.NoError(t, err)
+	assert.Equal(t, "●\n┃\n●\n", text)
+	tikz, err := g.TikZ(d)
+	require.NoError(t, err)
+	assert.Equal(t, 1, strings.Count(tikz, `\draw`))
+}
+
+// Names are the caller's; whatever they hold, the picture stays well-formed.
+func TestNamesAreMadeSafe(t *testing.T) {
+	for _, name := range []string{"<b>&\"'", "a\x00\x1b]0;\xff\uFFFE", "\t\n", "long name"} {
+		g := arcGraph(3, 7, [3]int{})
+		d := snake.Drawing{Name: func(snake.Label) string { return name }, EdgeNames: true}
+		svg, err := g.SVG(d)
+		require.NoError(t, err)
+		countElements(t, svg)
+		text, err := g.Text(d)
+		require.NoError(t, err)
+		for _, r := range text {
+			require.True(t, r == '\n' || r >= ' ')
+		}
+	}
+}
+
+func TestPicturesRefuse(t *testing.T) {
+	other := snake.Matching{}
+	small, long := snake.FromWord(mustWord("RL")), snake.FromWord(mustWord("L600"))
+	for _, draw := range []func(snake.Graph, snake.Drawing) (string, error){snake.Graph.SVG, snake.Graph.TikZ, snake.Graph.Text} {
+		_, err := draw(small, snake.Drawing{Matching: &other})
+		assert.ErrorIs(t, err, snake.ErrNotMatching)
+		_, err = draw(long, snake.Drawing{})
+		assert.ErrorIs(t, err, snake.ErrTooLong)
+		_, err = draw(hugeGraph(), snake.Drawing{})
+		assert.ErrorIs(t, err, snake.ErrTooLong)
+	}
+	b := bandBuilt("RRLRL")
+	for _, draw := range []func(snake.Band, snake.Drawing) (string, error){snake.Band.SVG, snake.Band.TikZ, snake.Band.Text} {
+		_, err := draw(b, snake.Drawing{Matching: &other})
+		assert.ErrorIs(t, err, snake.ErrNotMatching)
+	}
+}
+
+func TestHassePictures(t *testing.T) {
+	set, err := snake.FromWord(mustWord("RLLR")).Set()
+	require.NoError(t, err)
+	h, err := set.Hasse(100)
+	require.NoError(t, err)
+	svg, err := h.SVG(snake.Drawing{Name: className})
+	require.NoError(t, err)
+	nodes, arcs := len(h.Nodes()), len(h.Arcs())
+	count := countElements(t, svg)
+	assert.Equal(t, nodes+1, count["rect"])
+	assert.Equal(t, arcs, count["text"])
+	assert.Equal(t, nodes*(5+16)+arcs+1, count["line"])
+
+	many, err := snake.FromWord(mustWord("LRLRLRLRLRLRL")).Set()
+	require.NoError(t, err)
+	h, err = many.Hasse(1000)
+	require.NoError(t, err)
+	_, err = h.SVG(snake.Drawing{})
+	assert.ErrorIs(t, err, snake.ErrTooMany)
+
+	wide, err := snake.FromWord(mustWord("L600")).Set()
+	require.NoError(t, err)
+	for i := range 600 { // leaves one flip free: the last tile
+		wide, err = wide.WithTile(601-i, false)
+		require.NoError(t, err)
+	}
+	h, err = wide.Hasse(2)
+	require.NoError(t, err)
+	_, err = h.SVG(snake.Drawing{})
+	assert.ErrorIs(t, err, snake.ErrTooLong)
+
+	var zero snake.Hasse
+	_, err = zero.SVG(snake.Drawing{})
+	assert.NoError(t, err)
+	assert.Contains(t, zero.DOT(), "digraph")
+	assert.Empty(t, zero.Nodes())
+	assert.Empty(t, zero.Arcs())
+}
+
+// Every drawn form is pinned by a file: the slope 2/3 with weights (1, 0, 1),
+// one flip below the maximal matching.
+func TestGoldenPictures(t *testing.T) {
+	g := arcGraph(2, 3, [3]int{1, 0, 1})
+	set, err := g.Set()
+	require.NoError(t, err)
+	m, err := set.Maximal()
+	require.NoError(t, err)
+	flips, err := set.Flips(m)
+	require.NoError(t, err)
+	m, err = set.Flip(m, flips[0])
+	require.NoError(t, err)
+	d := snake.Drawing{Name: className, EdgeNames: true, Matching: &m, Hexagons: true}
+	svg, err := g.SVG(d)
+	require.NoError(t, err)
+	golden(t, "arc.svg", svg)
+	tikz, err := g.TikZ(d)
+	require.NoError(t, err)
+	golden(t, "arc.tikz", tikz)
+	text, err := g.Text(d)
+	require.NoError(t, err)
+	golden(t, "arc.txt", text)
+	lists, err := g.AdjacencyText()
+	require.NoError(t, err)
+	golden(t, "arc.adjacency", lists)
+	h, err := set.Hasse(50)
+	require.NoError(t, err)
+	svg, err = h.SVG(snake.Drawing{})
+	require.NoError(t, err)
+	golden(t, "lattice.svg", svg)
+	golden(t, "lattice.dot", h.DOT())
+	svg, err = bandBuilt("RRLRL").SVG(snake.Drawing{Name: className})
+	require.NoError(t, err)
+	golden(t, "band.svg", svg)
+}
