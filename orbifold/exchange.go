@@ -33,12 +33,11 @@ type rule[T any] struct {
 	family Family
 	k      T    // K
 	weight [3]T // by class
-
-	jumpLength uint64 // see the variable of that name
+	jumps  jumpFrom
 }
 
-func newRule[T any](f Family, r ring[T], jumpLength uint64) rule[T] {
-	x := rule[T]{ring: r, family: f, k: r.From(f.K()), jumpLength: jumpLength}
+func newRule[T any](f Family, r ring[T], jumps jumpFrom) rule[T] {
+	x := rule[T]{ring: r, family: f, k: r.From(f.K()), jumps: jumps}
 	for _, c := range classes {
 		x.weight[c] = r.From(big.NewInt(f.weights[c]))
 	}

@@ -6,13 +6,16 @@ import (
 	"example.com/onecusp/farey"
 )
 
-// A run of flips about one vertex is jumped and not stepped from this length
-// on, over the integers, where a step costs the more the farther out it is, and in
-// residue rings, where all steps cost the same. BenchmarkJumpLength shows where the
-// two ways meet.
+// jumpFrom says from which length on a run of flips about one vertex is
+// jumped and not stepped: for the two arcs at its end, and for one arc alone.
+type jumpFrom struct{ pair, term uint64 }
+
+// Over the integers a step costs the more the farther out it is; in residue
+// rings all steps cost the same. BenchmarkJumpLength shows where the two ways
+// meet.
 var (
-	jumpLength        = uint64(12)
-	residueJumpLength = uint64(32)
+	exactJumps   = jumpFrom{pair: 12, term: 6}
+	residueJumps = jumpFrom{pair: 32, term: 24}
 )
 
 // fan is the sequence of arcs round a fixed vertex, the pivot, of number N:
@@ -39,7 +42,7 @@ func (f fan[T]) class(n *big.Int) farey.Class { return f.y[n.Bit(0)].class }
 // pair returns the arcs n and n+1, for two multiplications of the size of the
 // result at the top.
 func (f fan[T]) pair(n *big.Int) (lo, hi vertex[T]) {
-	if n.IsUint64() && n.Uint64() < f.x.jumpLength {
+	if n.IsUint64() && n.Uint64() < f.x.jumps.pair {
 		return f.walk(n.Uint64())
 	}
 	return f.leap(n, true)
@@ -48,7 +51,7 @@ func (f fan[T]) pair(n *big.Int) (lo, hi vertex[T]) {
 // term returns arc n, for one multiplication of the size of the result at the
 // top.
 func (f fan[T]) term(n *big.Int) vertex[T] {
-	if n.IsUint64() && n.Uint64() <= f.x.jumpLength {
+	if n.IsUint64() && n.Uint64() <= f.x.jumps.term {
 		lo, hi := f.walk(max(n.Uint64(), 1) - 1)
 		if n.Sign() == 0 {
 			return lo

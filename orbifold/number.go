@@ -60,12 +60,12 @@ func (f Family) NumberMod(s farey.Slope, m *big.Int) (*big.Int, error) {
 		return new(big.Int).SetUint64(f.numberMod64(s.Path(), m.Uint64())), nil
 	}
 	r := ring[*big.Int](newResidues(m))
-	return newRule(f, r, residueJumpLength).newest(s.Path(), always).number, nil
+	return newRule(f, r, residueJumps).newest(s.Path(), always).number, nil
 }
 
 // numberMod64 is NumberMod for the newest arc of a path and a word modulus ≥ 1.
 func (f Family) numberMod64(p farey.Path, m uint64) uint64 {
-	return newRule(f, ring[uint64](wordResidues{m}), residueJumpLength).newest(p, always).number
+	return newRule(f, ring[uint64](wordResidues{m}), residueJumps).newest(p, always).number
 }
 
 func checkModulus(m *big.Int) error {
@@ -76,7 +76,7 @@ func checkModulus(m *big.Int) error {
 }
 
 // exact returns the exchange rule over the integers.
-func (f Family) exact() rule[*big.Int] { return newRule(f, ring[*big.Int](integers{}), jumpLength) }
+func (f Family) exact() rule[*big.Int] { return newRule(f, ring[*big.Int](integers{}), exactJumps) }
 
 func always() bool { return true }
 

@@ -12,17 +12,18 @@ import (
 
 // BenchmarkJumpLength compares stepping and jumping a run of n flips: exact,
 // about a number of the size given, and modulo 256 bits and a word.
-// jumpLength and residueJumpLength are the lengths where the two meet.
+// exactJumps and residueJumps are the lengths where the two meet.
 func BenchmarkJumpLength(b *testing.B) {
-	defer func(n, m uint64) { jumpLength, residueJumpLength = n, m }(jumpLength, residueJumpLength)
+	defer func(n, m jumpFrom) { exactJumps, residueJumps = n, m }(exactJumps, residueJumps)
 	big256 := new(big.Int).Lsh(big.NewInt(1), 256)
 	for _, n := range []uint64{4, 6, 8, 12, 16, 24, 32, 48, 64} {
 		for _, f := range []Family{{}, MustNew(1, 0, 2)} {
 			for _, way := range []string{"step", "jump"} {
-				jumpLength, residueJumpLength = 1, 1
+				at := jumpFrom{1, 1}
 				if way == "step" {
-					jumpLength, residueJumpLength = 1<<63, 1<<63
+					at = jumpFrom{1 << 63, 1 << 63}
 				}
+				exactJumps, residueJumps = at, at
 				for _, depth := range []uint64{1, 12, 20} { // flips before
 					var w contfrac.WordBuilder
 					letter := contfrac.L
@@ -31,6 +32,13 @@ func BenchmarkJumpLength(b *testing.B) {
 						letter = letter.Other()
 					}
 					w.Append(letter, n)
+					last := farey.NewPath(farey.Infinity, w.Word())
+					b.Run(fmt.Sprintf("%v/last/depth%d/%d/%s", f, depth, n, way), func(b *testing.B) {
+						x := f.exact()
+						for b.Loop() {
+							x.newest(last, always)
+						}
+					})
 					w.Append(letter.Other(), 1)
 					p := farey.NewPath(farey.Infinity, w.Word())
 					b.Run(fmt.Sprintf("%v/exact/depth%d/%d/%s", f, depth, n, way), func(b *testing.B) {
@@ -48,7 +56,7 @@ func BenchmarkJumpLength(b *testing.B) {
 				p := farey.NewPath(farey.Infinity, w.Word())
 				b.Run(fmt.Sprintf("%v/256bits/%d/%s", f, n, way), func(b *testing.B) {
 					for b.Loop() {
-						newRule(f, ring[*big.Int](newResidues(big256)), residueJumpLength).newest(p, always)
+						newRule(f, ring[*big.Int](newResidues(big256)), residueJumps).newest(p, always)
 					}
 				})
 				b.Run(fmt.Sprintf("%v/word/%d/%s", f, n, way), func(b *testing.B) {
@@ -64,7 +72,7 @@ func BenchmarkJumpLength(b *testing.B) {
 // TestNumbersDoNotDependOnTheJumpLength runs with the thresholds forced to
 // their least and to infinity.
 func TestNumbersDoNotDependOnTheJumpLength(t *testing.T) {
-	defer func(n, m uint64) { jumpLength, residueJumpLength = n, m }(jumpLength, residueJumpLength)
+	defer func(n, m jumpFrom) { exactJumps, residueJumps = n, m }(exactJumps, residueJumps)
 	r := rand.New(rand.NewSource(11))
 	m := new(big.Int).Lsh(big.NewInt(3), 70)
 	for range 200 {
@@ -76,7 +84,7 @@ func TestNumbersDoNotDependOnTheJumpLength(t *testing.T) {
 		s, _ := farey.NewPath(farey.Class(r.Intn(3)), w.Word()).Slope()
 		var want *big.Int
 		for _, n := range []uint64{0, 1, 2, 3, 7, 1 << 63} {
-			jumpLength, residueJumpLength = n, n
+			exactJumps, residueJumps = jumpFrom{n, n}, jumpFrom{n, n}
 			got, err := f.Number(s)
 			if err != nil {
 				t.Fatal(err)
