@@ -167,7 +167,23 @@ func BenchmarkLehmer(b *testing.B) {
 	for _, size := range []int{20_000, 300_000} {
 		p, q := pseudorandom(size, 1), pseudorandom(size, 2)
 		b.Run(fmt.Sprintf("bits=%d/from", size), func(b *testing.B) {
-			sweep(b, []int{1000, 2000, 3000, 4096, 6000, 8000, 12000}, func(t *contfrac.Thresholds, v int) { t.Lehmer = v }, func() { _, _ = contfrac.FromRatio(p, q) })
+			sweep(b, []int{1000, 2000, 4000, 8000, 16000}, func(t *contfrac.Thresholds, v int) { t.Lehmer = v }, func() { _, _ = contfrac.FromRatio(p, q) })
+		})
+	}
+}
+
+// BenchmarkLongQuotient calibrates longQuotient and divideUpTo: divisions
+// against the halving, on numbers with quotients of these many bits.
+func BenchmarkLongQuotient(b *testing.B) {
+	for _, size := range [][2]int{{100, 200_000}, {250, 200_000}, {500, 200_000}, {1000, 200_000}, {1000, 2_000_000}} {
+		var terms []*big.Int
+		for i := range size[1] / size[0] {
+			terms = append(terms, pseudorandom(size[0], uint64(i)))
+		}
+		f, _ := contfrac.NewFraction(terms...)
+		p, q := f.Ratio()
+		b.Run(fmt.Sprintf("quotients=%d/bits=%d/from", size[0], size[1]), func(b *testing.B) {
+			sweep(b, []int{0, math.MaxInt}, func(t *contfrac.Thresholds, v int) { t.LongQuotient = v }, func() { _, _ = contfrac.FromRatio(p, q) })
 		})
 	}
 }

@@ -51,9 +51,22 @@ func euclid(p, q *big.Int) Fraction {
 			break
 		}
 		before := e.n
-		if x, y, _ = e.halfway(x, y, n/2, false); e.n == before {
-			x, y, t = e.divide(x, y)
+		if d := n - y.BitLen(); d < longQuotient || n > divideUpTo && d < n/8 {
+			x, y, _ = e.halfway(x, y, n/2, false)
+		}
+		if e.n == before {
+			x, y, _ = e.divide(x, y)
 		}
 	}
 	return e.fraction()
 }
+
+// A division costs as much for each bit of its quotient as the numbers have
+// words, whatever the quotient, and is far quicker at it than the halving.
+// From a quotient of longQuotient bits it is therefore preferred, up to numbers
+// of divideUpTo bits, and beyond these for quotients of an eighth of the numbers;
+// BenchmarkLongQuotient calibrates them.
+var (
+	longQuotient = 256
+	divideUpTo   = 1 << 21
+)

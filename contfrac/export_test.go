@@ -4,21 +4,24 @@ import "math"
 
 // Thresholds are the sizes at which one algorithm takes over from another.
 type Thresholds struct {
-	Product, Square, Seven, WordLeaves, Lehmer, FromDigits int
-	Fork                                                   int64
+	Product, Square, Seven, WordLeaves, Lehmer, FromDigits, LongQuotient int
+	Fork                                                                 int64
 }
 
 // Minimal sends everything that can go there to the algorithms for large sizes.
-var Minimal = Thresholds{0, 0, 0, 1, 0, 1, 0}
+var Minimal = Thresholds{0, 0, 0, 1, 0, 1, math.MaxInt, 0}
 
 // Infinite sends everything to the algorithms for small sizes.
-var Infinite = Thresholds{math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt64}
+var Infinite = Thresholds{math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt64}
+
+// Dividing expands everything by divisions.
+var Dividing = Thresholds{math.MaxInt, math.MaxInt, math.MaxInt, math.MaxInt, 0, math.MaxInt, 0, math.MaxInt64}
 
 // SetThresholds sets the thresholds and returns those that it replaces.
 func SetThresholds(t Thresholds) Thresholds {
-	old := Thresholds{productThreshold, squareThreshold, sevenThreshold, wordLeaves, lehmerBits, fromDigitsSize, forkBits}
+	old := Thresholds{productThreshold, squareThreshold, sevenThreshold, wordLeaves, lehmerBits, fromDigitsSize, longQuotient, forkBits}
 	productThreshold, squareThreshold, sevenThreshold, wordLeaves = t.Product, t.Square, t.Seven, t.WordLeaves
-	lehmerBits, fromDigitsSize, forkBits = t.Lehmer, t.FromDigits, t.Fork
+	lehmerBits, fromDigitsSize, longQuotient, forkBits = t.Lehmer, t.FromDigits, t.LongQuotient, t.Fork
 	return old
 }
 

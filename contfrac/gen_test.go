@@ -136,8 +136,9 @@ func unimodular() *rapid.Generator[contfrac.Matrix] {
 	})
 }
 
-// atThresholds runs a test with the thresholds as they are, with all at their least and
-// with all at infinity.
+// atThresholds runs a test with the thresholds as they are, with all at their
+// least, with all at infinity, and with those of the expansions so that only
+// divisions are made.
 func atThresholds(t *testing.T, test func(t *testing.T)) {
 	t.Run("default", test)
 	t.Run("minimal", func(t *testing.T) {
@@ -146,6 +147,10 @@ func atThresholds(t *testing.T, test func(t *testing.T)) {
 	})
 	t.Run("infinite", func(t *testing.T) {
 		defer contfrac.SetThresholds(contfrac.SetThresholds(contfrac.Infinite))
+		test(t)
+	})
+	t.Run("dividing", func(t *testing.T) {
+		defer contfrac.SetThresholds(contfrac.SetThresholds(contfrac.Dividing))
 		test(t)
 	})
 }

@@ -17,7 +17,7 @@ type expansion struct{ termBuilder }
 
 // lehmerBits is the size in bits up to which numbers are expanded by
 // expansion.lehmer; BenchmarkLehmer calibrates it.
-var lehmerBits = 4096
+var lehmerBits = 8000
 
 // halfway expands x > y ≥ 0 until y has at most s bits while x has more, and returns what is left and,
 // if wanted, the matrix of the quotients.

@@ -91,7 +91,7 @@ func decimal(s string) (*big.Int, error) {
 
 // fromDigitsSize is the number of digits up to which the quadratic method of
 // math/big reads a decimal; see BenchmarkFromDigits.
-var fromDigitsSize = 20000
+var fromDigitsSize = 3000
 
 // fromDigits returns the value of a string of decimal digits.
 func fromDigits(s string) *big.Int {

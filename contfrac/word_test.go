@@ -211,16 +211,20 @@ func TestLettersOfAnEnormousWordAreLazy(t *testing.T) {
 		assert.Equal(t, int64(2), n.Int64())
 		break
 	}
-	// Past one word of letters the count goes on in the next.
-	w = parse(t, "L18446744073709551616")
-	for range w.Letters() {
-		break
+	// A run longer than a machine word counts is begun in another way.
+	for _, read := range []int{1, 3} {
+		n := 0
+		for l := range parse(t, "L18446744073709551617 R").Letters() {
+			assert.Equal(t, contfrac.L, l)
+			if n++; n == read {
+				break
+			}
+		}
 	}
-	n := 0
-	for range parse(t, "L3").Letters() {
-		n++
-	}
-	assert.Equal(t, 3, n)
+}
+
+func TestLengthPastTheWord(t *testing.T) {
+	assert.Equal(t, "36893488147419103231", parse(t, "L18446744073709551615 R18446744073709551615 L").Len().String())
 }
 
 func TestLongWordsAreWrittenByRuns(t *testing.T) {
