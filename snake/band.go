@@ -24,8 +24,8 @@ var ErrOneLetter = errors.New("a band needs both letters")
 // matchings are the order ideals of the ring-shaped [Fence].
 //
 // A Band is immutable. The zero value has no tiles and no good matching.
-// Sources: "Positivity for cluster algebras from surfaces", Adv. Math. 227
-// (2011).
+// Source: "Bases for cluster algebras from surfaces", Compositio Math. 149
+// (2013) (memory).
 type Band struct {
 	run contfrac.Word
 	s   *shape // the layout; nil when it is long, and for the zero value

@@ -30,6 +30,8 @@
 // "both are covered".
 //
 // Sources: "Cluster algebras and continued fractions", Compositio Math. 154
-// (2018); "Lattice structure of the matchings" follows from "Positivity for
-// cluster algebras from surfaces", Adv. Math. 227 (2011).
+// (2018), for shapes and numbers; "Positivity for cluster algebras from
+// surfaces", Adv. Math. 227 (2011), for labels, weights and flips; "Bases for
+// cluster algebras from surfaces", Compositio Math. 149 (2013), for bands
+// (memory).
 package snake

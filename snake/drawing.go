@@ -1,8 +1,6 @@
 package snake
 
-import (
-	"fmt"
-)
+import "fmt"
 
 // MaxDrawnTiles is the largest number of tiles that a picture is made of.
 const MaxDrawnTiles = 500
@@ -64,7 +62,7 @@ func (t Set) picture(d Drawing) (*picture, error) {
 	if d.Matching != nil {
 		edges, err := t.EdgesOf(*d.Matching)
 		if err != nil {
-			return nil, fmt.Errorf("snake: picture: %w", err)
+			return nil, err
 		}
 		for _, e := range edges {
 			used[e] = true

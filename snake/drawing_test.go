@@ -9,6 +9,7 @@ import (
 	"path/filepath"
 	"strings"
 	"testing"
+	"unicode"
 
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
@@ -172,7 +173,7 @@ func TestPicturesOfTheSingleEdge(t *testing.T) {
 
 // Names are the caller's; whatever they hold, the picture stays well-formed.
 func TestNamesAreMadeSafe(t *testing.T) {
-	for _, name := range []string{"<b>&\"'", "a\x00\x1b]0;\xff\uFFFE", "\t\n", "long name"} {
+	for _, name := range []string{"<b>&\"'", "a\x00\x1b]0;\xff\uFFFE", "\t\n", "\u009b31m\x7f", "long name"} {
 		g := arcGraph(3, 7, [3]int{})
 		d := snake.Drawing{Name: func(snake.Label) string { return name }, EdgeNames: true}
 		svg, err := g.SVG(d)
@@ -181,7 +182,7 @@ func TestNamesAreMadeSafe(t *testing.T) {
 		text, err := g.Text(d)
 		require.NoError(t, err)
 		for _, r := range text {
-			require.True(t, r == '\n' || r >= ' ')
+			require.True(t, r == '\n' || !unicode.IsControl(r))
 		}
 	}
 }
@@ -231,6 +232,13 @@ func TestHassePictures(t *testing.T) {
 		require.NoError(t, err)
 	}
 	h, err = wide.Hasse(2)
+	require.NoError(t, err)
+	_, err = h.SVG(snake.Drawing{})
+	assert.ErrorIs(t, err, snake.ErrTooLong)
+
+	narrow, err := snake.FromWord(mustWord("L300")).Set()
+	require.NoError(t, err)
+	h, err = narrow.Hasse(400)
 	require.NoError(t, err)
 	_, err = h.SVG(snake.Drawing{})
 	assert.ErrorIs(t, err, snake.ErrTooLong)

@@ -201,6 +201,16 @@ func ExampleGraft() {
 	// Output: 5 * 7 = 31 + 2 * 2
 }
 
+// [2; 3, 4] between its first two terms: K(2, 3, 4) = K(2)·K(3, 4) + 1·K(4).
+func ExampleSplit() {
+	f, _ := contfrac.ParseFraction("[2; 3, 4]")
+	g, _ := snake.FromFraction(f)
+	r, _ := snake.Split(g, 2)
+	fmt.Println(r.Product[0].Count(), "=",
+		r.First[0].Count(), "*", r.First[1].Count(), "+", r.Second[0].Count(), "*", r.Second[1].Count())
+	// Output: 30 = 1 * 4 + 2 * 13
+}
+
 func ExampleResolve() {
 	u, _ := contfrac.ParseWord("RRL")
 	v, _ := contfrac.ParseWord("LR")

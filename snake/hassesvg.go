@@ -6,8 +6,13 @@ import (
 	"slices"
 )
 
-// MaxDrawnMatchings is the largest number of matchings that [Hasse.SVG] draws.
-const MaxDrawnMatchings = 400
+// MaxDrawnMatchings is the largest number of matchings that [Hasse.SVG] draws,
+// and MaxLatticeTiles the largest number of tiles in all its small pictures
+// together.
+const (
+	MaxDrawnMatchings = 400
+	MaxLatticeTiles   = 20000
+)
 
 // SVG draws the diagram as a self-contained SVG image, growing upwards, with a
 // small picture of the matching at every node and the flipped tile's number at
@@ -15,13 +20,15 @@ const MaxDrawnMatchings = 400
 // small pictures.
 //
 // It returns a [*TooManyError] past [MaxDrawnMatchings] matchings and
-// [ErrTooLong] past [MaxDrawnTiles] tiles.
+// [ErrTooLong] past [MaxDrawnTiles] tiles in the graph or [MaxLatticeTiles] in
+// all.
 func (h Hasse) SVG(d Drawing) (string, error) {
 	if len(h.nodes) > MaxDrawnMatchings {
 		return "", tooMany(len(h.nodes), MaxDrawnMatchings)
 	}
-	if n := h.set.Tiles(); n > MaxDrawnTiles {
-		return "", fmt.Errorf("snake: picture of matchings of %s: at most %d are accepted: %w", tileCount(n), MaxDrawnTiles, ErrTooLong)
+	if n := h.set.Tiles(); n > MaxDrawnTiles || n*len(h.nodes) > MaxLatticeTiles {
+		return "", fmt.Errorf("snake: picture of %d matchings of %s: at most %d tiles, and %d in all, are accepted: %w",
+			len(h.nodes), tileCount(n), MaxDrawnTiles, MaxLatticeTiles, ErrTooLong)
 	}
 	const (
 		unit, pad  = 15.0, 7.0

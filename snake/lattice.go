@@ -196,10 +196,9 @@ func (t Set) allows(tile int, from state, up bool) bool {
 	return false
 }
 
-// Minimal returns the least matching of the set; sets closed under meet and
-// join, as all that [Set.WithTile] and [Set.WithEdge] make, have one unless
-// they are empty. It is the first that [Set.All] yields. It returns [ErrIndex]
-// when the set is empty.
+// Minimal returns the least matching of the set, the first that [Set.All]
+// yields: what [Set.WithTile] and [Set.WithEdge] leave over is closed under
+// meet and join. It returns [ErrIndex] when the set is empty.
 func (t Set) Minimal() (Matching, error) { return t.extreme(false) }
 
 // Maximal returns the greatest matching of the set, the last that [Set.All]

@@ -62,6 +62,19 @@ func TestMatchingsCompareAsStrings(t *testing.T) {
 	})
 }
 
+// The places where the storage ends: inside the word, at its end, in the bytes behind.
+func TestShorterMatchingsComeFirst(t *testing.T) {
+	for _, n := range []int{0, 1, 63, 64, 65, 72, 73, 200} {
+		short, err := snake.ParseMatching(strings.Repeat("0", n))
+		require.NoError(t, err)
+		long, err := snake.ParseMatching(strings.Repeat("0", n+1))
+		require.NoError(t, err)
+		assert.Equal(t, -1, short.Compare(long))
+		assert.Equal(t, 1, long.Compare(short))
+		assert.Equal(t, 0, long.Compare(long))
+	}
+}
+
 func TestParseMatchingRefuses(t *testing.T) {
 	for _, s := range []string{"2", "01x", " 01", "0é1", strings.Repeat("0", 200) + "-"} {
 		_, err := snake.ParseMatching(s)

@@ -2,6 +2,8 @@ package snake_test
 
 import (
 	"math"
+	"math/big"
+	"strings"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -94,4 +96,72 @@ func TestRelationsRefuse(t *testing.T) {
 	}
 	_, err := snake.Resolve(g, h, snake.Overlap{First: 1, Second: 1, Tiles: 2})
 	assert.ErrorIs(t, err, snake.ErrNotCrossing)
+}
+
+// Splitting is an identity, and its two parts are the matchings with the tile
+// flipped and not flipped.
+func TestSplittingIsAnIdentity(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		g := snake.FromWord(mustWord(words(60).Draw(t, "word")))
+		tile := rapid.IntRange(1, g.Tiles()).Draw(t, "tile")
+		r, err := snake.Split(g, tile)
+		require.NoError(t, err)
+		holds(t, r)
+		set, err := g.Set()
+		require.NoError(t, err)
+		for up, pair := range map[bool][2]snake.Graph{true: r.First, false: r.Second} {
+			part, err := set.WithTile(tile, up)
+			require.NoError(t, err)
+			require.Equal(t, part.Count(), contfrac.Product(pair[0].Count(), pair[1].Count()))
+		}
+		// What is left on either side is a piece of the graph.
+		w, _ := g.Word()
+		for _, pair := range [][2]snake.Graph{r.First, r.Second} {
+			if left, ok := pair[0].Word(); ok {
+				require.True(t, strings.HasPrefix(w.String(), left.String()))
+			}
+			if right, ok := pair[1].Word(); ok {
+				require.True(t, strings.HasSuffix(w.String(), right.String()))
+			}
+		}
+	})
+}
+
+// At the tile between two runs the parts are the continuants of the identity
+// K(a…b, c…d) = K(a…b)·K(c…d) + K(a…)·K(…d). (Common practice.)
+func TestSplittingBetweenRunsIsTheContinuantIdentity(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		runs := rapid.SliceOfN(rapid.Int64Range(2, 9), 2, 12).Draw(t, "runs")
+		k := rapid.IntRange(1, len(runs)-1).Draw(t, "cut")
+		terms := make([]*big.Int, len(runs))
+		tile := 0
+		for i, a := range runs {
+			terms[i] = big.NewInt(a)
+			if i < k {
+				tile += int(a)
+			}
+		}
+		f, err := contfrac.NewFraction(terms...)
+		require.NoError(t, err)
+		g, err := snake.FromFraction(f)
+		require.NoError(t, err)
+		r, err := snake.Split(g, tile)
+		require.NoError(t, err)
+		product := func(p [2]snake.Graph) string { return contfrac.Product(p[0].Count(), p[1].Count()).String() }
+		whole := contfrac.Product(contfrac.Continuant(terms[:k]), contfrac.Continuant(terms[k:]))
+		short := contfrac.Product(contfrac.Continuant(terms[:k-1]), contfrac.Continuant(terms[k+1:]))
+		require.ElementsMatch(t, []string{whole.String(), short.String()}, []string{product(r.First), product(r.Second)})
+	})
+}
+
+func TestSplitRefuses(t *testing.T) {
+	for _, tile := range []int{-1, 0, 4} {
+		_, err := snake.Split(built("RL"), tile)
+		assert.ErrorIs(t, err, snake.ErrNoTile)
+	}
+	_, err := snake.Split(snake.Edge(), 0)
+	assert.ErrorIs(t, err, snake.ErrNoTile)
+	r, err := snake.Split(hugeGraph(), 1<<30)
+	require.NoError(t, err)
+	holds(t, r)
 }

@@ -6,6 +6,7 @@ import (
 	"math/big"
 	"math/rand/v2"
 	"slices"
+	"sync"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -301,4 +302,20 @@ func TestRankRefusesLongGraphs(t *testing.T) {
 	assert.ErrorIs(t, err, snake.ErrTooLong)
 	_, err = hugeGraph().Set()
 	assert.ErrorIs(t, err, snake.ErrTooLong)
+}
+
+// One set may be used from many goroutines; the table behind ranks is made once.
+func TestSetsAreSafeForConcurrentUse(t *testing.T) {
+	set, err := snake.FromWord(mustWord(mixed(200))).Set()
+	require.NoError(t, err)
+	var group sync.WaitGroup
+	for k := range 8 {
+		group.Go(func() {
+			m, err := set.Sample(rand.NewPCG(uint64(k), 1))
+			if err != nil || !set.Contains(m) {
+				t.Errorf("sample %v: %v", m, err)
+			}
+		})
+	}
+	group.Wait()
 }

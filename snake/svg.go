@@ -119,7 +119,7 @@ func (c *canvas) text(s spot, size float64, ink, halo, text string) {
 // have become question marks.
 func escape(text string) string {
 	return html.EscapeString(strings.Map(func(r rune) rune {
-		if r < ' ' || r == unicode.ReplacementChar || r >= 0xFFFE && r <= 0xFFFF {
+		if unicode.IsControl(r) || r == unicode.ReplacementChar || r >= 0xFFFE && r <= 0xFFFF {
 			return '?'
 		}
 		return r

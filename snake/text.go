@@ -4,7 +4,7 @@ import (
 	"fmt"
 	"math/big"
 	"strings"
-	"unicode/utf8"
+	"unicode"
 
 	"example.com/onecusp/contfrac"
 )
@@ -104,7 +104,7 @@ func (p *picture) text() string {
 			x++
 		}
 		for k, r := range text {
-			if r == utf8.RuneError || r < ' ' {
+			if r == unicode.ReplacementChar || unicode.IsControl(r) {
 				r = '?'
 			}
 			put(x+k, y, r)

@@ -23,9 +23,9 @@ func (t Set) Set() (Set, error) { return t, nil }
 // ([Tile.Diagonal]). Weights One on edges and q on tiles give the rank
 // generating function.
 //
-// It takes at most 10 multiplications and 5 additions a tile, for a band twice
-// as many, and asks for each weight at most that often. It returns [ErrTooLong]
-// past [MaxTiles] tiles.
+// It takes at most 6 multiplications and 3 additions a tile, for a band twice
+// as many, and asks for a weight where it multiplies with it. It returns
+// [ErrTooLong] past [MaxTiles] tiles.
 // Source: "Positivity for cluster algebras from surfaces", Adv. Math. 227 (2011).
 func Weigh[T any](r Semiring[T], g Matched, w Weights[T]) (T, error) {
 	t, err := g.Set()
