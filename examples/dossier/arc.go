@@ -129,6 +129,7 @@ func arcPicture(s farey.Slope, crossings []farey.Crossing) picture {
 	}
 	return picture{
 		Caption: fmt.Sprintf("The arc of slope %v in the lattice, triangulated by all segments of slopes 0/1, 1/0 and 1/1; the triangles passed are tinted", s),
+		Least:   d.least(),
 		SVG: d.document(fmt.Sprintf("The arc of slope %v from (0,0) to (%d,%d) in the triangulated lattice, with %s marked",
 			s, q, p, plural(big.NewInt(int64(len(crossings))), "crossing", "crossings"))),
 		Key: arcKey(crossings),

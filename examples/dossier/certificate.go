@@ -21,14 +21,14 @@ func (d *dossier) writeCertificates(ctx context.Context, folder string) error {
 	if err := os.MkdirAll(folder, 0o755); err != nil {
 		return err
 	}
-	for i, e := range d.Entries {
+	for _, e := range d.Entries {
 		s := section{Title: "Certificate"}
 		if !e.held {
 			s.Remark = "None: the number is too large."
 			e.Sections = append(e.Sections, s)
 			continue
 		}
-		name := e.certificateName(i)
+		name := e.certificateName()
 		text, err := json.MarshalIndent(e.certificate, "", "  ")
 		if err != nil {
 			return err
@@ -65,14 +65,10 @@ func readBack(ctx context.Context, file string) error {
 	return c.VerifyContext(ctx)
 }
 
-// certificateName is the name of a certificate's file: the slope, or its place in the
-// list when it is long.
-func (e *entry) certificateName(place int) string {
-	name := strings.NewReplacer("/", "_", "-", "minus-").Replace(e.Slope.String())
-	if len(name) > 40 {
-		name = fmt.Sprintf("slope-%d", place+1)
-	}
-	return "certificate-" + name + ".json"
+// certificateName is the name of a certificate's file. A slope whose number can be held
+// has few digits.
+func (e *entry) certificateName() string {
+	return "certificate-" + strings.NewReplacer("/", "_", "-", "minus-").Replace(e.Slope.String()) + ".json"
 }
 
 // certificates counts the entries that have one.

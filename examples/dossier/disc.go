@@ -10,7 +10,7 @@ import (
 
 const (
 	discRadius  = 132.0
-	discMargin  = 78.0
+	discMargin  = 92.0
 	discDepth   = 5  // flips from the base triangle up to which all triangles are drawn
 	discStops   = 60 // triangles of the path that are drawn; the later ones are too small to see
 	labelSpread = .2 // least angle between two names at the rim
@@ -25,17 +25,23 @@ func discPicture(s farey.Slope) picture {
 	d.triangle(farey.Triangle{}, tint)
 	last, drawn := farey.Triangle{}, 0
 	for stop := range trail(s.Path()) {
-		if drawn++; drawn > discStops {
+		last = stop.Triangle
+		d.triangle(last, tint)
+		if drawn++; drawn == discStops {
 			break
 		}
-		d.triangle(stop.Triangle, tint)
-		last = stop.Triangle
 	}
-	d.triangle(last, style{Fill: "#e5a50a", Stroke: "#a86b00", Width: 1})
+	caption := fmt.Sprintf("light, the path from the base triangle; dark, the triangle in which %v appears first", s)
+	if drawn < discStops {
+		d.triangle(last, style{Fill: "#e5a50a", Stroke: "#a86b00", Width: 1})
+	} else {
+		caption = fmt.Sprintf("light, the first %d triangles on the path from the base triangle to %v; the later ones are too small to see", discStops, s)
+	}
 	d.tessellation(farey.Triangle{}, 3, discDepth)
 	d.rim(s)
 	return picture{
-		Caption: fmt.Sprintf("The Farey triangles as ideal triangles in a disc: light, the path from the base triangle; dark, the triangle in which %v appears first", s),
+		Caption: "The Farey triangles as ideal triangles in a disc: " + caption,
+		Least:   d.least(),
 		SVG:     d.document(fmt.Sprintf("Farey triangles in a disc, with the path from the base triangle to %v", s)),
 		Key:     classKey(),
 	}
@@ -63,14 +69,12 @@ func (d *drawing) onRim(angle, radius float64) spot {
 }
 
 // geodesic continues a path of SVG commands from the rim point at angle a to the
-// one at angle b, by the circle through both that meets the rim at right angles.
+// one at angle b, by the circle through both that meets the rim at right angles. Neighbours
+// are never opposite each other, so that it is no straight line.
 func (d *drawing) geodesic(a, b float64) string {
 	turn := math.Remainder(b-a, 2*math.Pi)
 	end := d.onRim(b, discRadius)
 	radius := discRadius * math.Abs(math.Tan(turn/2))
-	if radius > 1e4 {
-		return fmt.Sprintf("L%s %s", pixels(end.x), pixels(end.y))
-	}
 	sweep := 0
 	if turn > 0 {
 		sweep = 1
@@ -137,7 +141,7 @@ func (d *drawing) rim(s farey.Slope) {
 		}
 		name := fmt.Sprint(t)
 		if len(name) > 9 {
-			name = "s"
+			name, size = "this slope", 12
 		}
 		d.write(at, anchor, size, colour, name)
 	}

@@ -51,7 +51,7 @@ const (
 		"in a table made by hand for the weights (2,0,1) the number 81 turned up twice, at " +
 		"2/5 and at 4/3, and a reader wants the whole file on both slopes before believing it."
 	scenarioWeights = "(2,0,1)"
-	scenarioSlopes  = "2/5 4/3 3/7 -3/4 233/610 271828/1000001"
+	scenarioSlopes  = "2/5 4/3 3/7 -3/4 233/610 123456/500009"
 )
 
 // maxSlopes bounds the slopes of one run, so that the page stays readable.
@@ -162,16 +162,18 @@ func parseArguments(args []string, stdout io.Writer) (options, error) {
 }
 
 // endOfFlags marks where the flags end when the first slope is negative: "-3/4" would
-// be taken for a flag otherwise. After a flag such an argument is the flag's value.
+// be taken for a flag otherwise. What stands after a flag is the flag's value.
 func endOfFlags(args []string) []string {
-	for i, a := range args {
-		if a == "--" {
-			return args
+	for i := 0; i < len(args); i++ {
+		a := args[i]
+		if a == "--" || !strings.HasPrefix(a, "-") {
+			break
 		}
-		negative := len(a) > 1 && a[0] == '-' && '0' <= a[1] && a[1] <= '9'
-		afterFlag := i > 0 && strings.HasPrefix(args[i-1], "-") && !strings.Contains(args[i-1], "=")
-		if negative && !afterFlag {
+		if len(a) > 1 && '0' <= a[1] && a[1] <= '9' {
 			return slices.Insert(slices.Clone(args), i, "--")
+		}
+		if !strings.Contains(a, "=") {
+			i++ // its value
 		}
 	}
 	return args

@@ -31,16 +31,16 @@ func (e *entry) numberSection(ctx context.Context) (section, error) {
 	s.add("Digits, bits", "%d, %d", len(n.String()), n.BitLen())
 	s.Table = &table{
 		Caption: "The four routes share as little as possible",
-		Head:    []string{"Route", "Result", "Computed", "Agrees", "In Go"},
+		Head:    []string{"Route", "Result", "Agrees", "Computed", "In Go"},
 		Marked:  -1,
 		Rows: [][]string{
-			{"descent by the exchange rule", digits(n), "exact", "yes", "f.Number(s)"},
-			countRow("continuant of the word", c.Continuant(), n, "f.Fraction(s) · Numerator()"),
-			countRow("matchings of the snake graph", c.Matchings(), n, "f.Snake(s) · Count()"),
-			{"upper right entry of the matrix", digits(c.Matrix().B()), "exact", yesNo(c.Matrix().B().Cmp(n) == 0), "f.Matrix(s) · B()"},
+			{"descent by the exchange rule", digits(n), "yes", "exact", "f.Number(s)"},
+			countRow("continuant of the word", c.Continuant(), n, "f.Fraction(s) → Numerator()"),
+			countRow("matchings of the snake graph", c.Matchings(), n, "f.Snake(s) → Count()"),
+			{"upper right entry of the matrix", digits(c.Matrix().B()), yesNo(c.Matrix().B().Cmp(n) == 0), "exact", "f.Matrix(s) → B()"},
 		},
 	}
-	s.Remark = agreement(s.Table.Rows, 3)
+	s.Remark = agreement(s.Table.Rows, 2)
 	return s, nil
 }
 
@@ -50,11 +50,11 @@ func countRow(name string, c orbifold.Count, n *big.Int, call string) []string {
 	switch c.Method {
 	case orbifold.Exact:
 		value, _ := c.Value()
-		return []string{name, digits(value), "exact", yesNo(c.Agrees(n)), call}
+		return []string{name, digits(value), yesNo(c.Agrees(n)), "exact", call}
 	case orbifold.ModuloPrimes:
-		return []string{name, fmt.Sprintf("%d residues", len(c.Residues())), "modulo primes", yesNo(c.Agrees(n)), call}
+		return []string{name, fmt.Sprintf("%d residues", len(c.Residues())), yesNo(c.Agrees(n)), "modulo primes", call}
 	}
-	return []string{name, "", notRun, "", call}
+	return []string{name, "", "", notRun, call}
 }
 
 func yesNo(b bool) string {
@@ -127,7 +127,7 @@ func (e *entry) residueSection(ctx context.Context) (section, error) {
 		if route != nil {
 			ran++
 		}
-		*row = append(*row, [4]string{"f.NumberMod(s, m)", "f.Fraction(s) · NumeratorMod(m)", "snake.Weigh, f.Snake(s)", "f.RootMod(s, m)"}[i])
+		*row = append(*row, [4]string{"f.NumberMod(s, m)", "f.Fraction(s) → NumeratorMod(m)", "f.Snake(s) → snake.Weigh", "f.RootMod(s, m)"}[i])
 	}
 	switch {
 	case !agree:

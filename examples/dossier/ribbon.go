@@ -76,6 +76,7 @@ func (e *entry) ribbonPicture() (picture, bool) {
 	d.width += 16 + 8.6*float64(widest)
 	return picture{
 		Caption: "The path unrolled: each flip adds the next triangle and its slope, with the number below the name; smaller slopes run along the lower rim, greater ones along the upper",
+		Least:   d.least(),
 		SVG: d.document(fmt.Sprintf("The %s from the base triangle to %v, unrolled into a strip",
 			plural(big.NewInt(int64(len(stops))), "flip", "flips"), e.Slope)),
 		Text: text.String(),
@@ -101,17 +102,23 @@ func (e *entry) nameVertex(d *drawing, s farey.Slope, at spot, place string) {
 	d.write(text, anchor, 11.5, "#5c5a52", e.numberLabel(s))
 }
 
+// maxLabelBits is the size of a number up to which a picture shows it.
+const maxLabelBits = 40
+
 // numberLabel is the number at a slope, or its length where there is little room.
 func (e *entry) numberLabel(s farey.Slope) string {
+	lo, hi, err := e.family.Bits(s)
+	if err != nil {
+		return ""
+	}
+	if hi.Cmp(big.NewInt(maxLabelBits)) > 0 {
+		return digits(lo) + " bits"
+	}
 	n, err := e.family.Number(s)
 	if err != nil {
-		return "too large"
+		return ""
 	}
-	text := n.String()
-	if len(text) > 12 {
-		return fmt.Sprintf("%d digits", len(text))
-	}
-	return text
+	return n.String()
 }
 
 func (e *entry) named(s farey.Slope) string { return fmt.Sprintf("%v = %s", s, e.numberLabel(s)) }

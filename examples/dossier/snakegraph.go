@@ -14,6 +14,7 @@ import (
 const (
 	maxDrawnTiles = 60 // a snake graph is drawn on the page up to this many tiles
 	maxTextTiles  = 24 // and with characters up to this many
+	leastTile     = 38 // pixels of a tile's side, at least
 )
 
 // snakeSection draws the snake graph with its minimal matching.
@@ -45,6 +46,7 @@ func (e *entry) snakeSection(context.Context) (section, error) {
 		// As an image: several such pictures share a page, and each brings definitions of its own.
 		Image: template.URL("data:image/svg+xml;base64," + base64.StdEncoding.EncodeToString([]byte(svg))),
 		Alt:   fmt.Sprintf("Snake graph of %s with its minimal matching", plural(tiles, "tile", "tiles")),
+		Least: leastTile * columns(graph),
 	}
 	if tiles.Sign() == 0 {
 		p.Caption = "The single edge, the graph of an arc that crosses nothing, with its one matching"
@@ -57,6 +59,15 @@ func (e *entry) snakeSection(context.Context) (section, error) {
 	}
 	s.Pictures = []picture{p}
 	return s, nil
+}
+
+// columns is the width of a graph, in tiles.
+func columns(g snake.Graph) int {
+	last := 0
+	for t := range g.AllTiles() {
+		last = t.At.X + 1
+	}
+	return last
 }
 
 // labelSign is the sign of the class that a label of the graph stands for.

@@ -21,7 +21,7 @@ const (
 
 var (
 	classColours = [3]string{"#a86b00", "#13507d", "#4a5568"}
-	classDashes  = [3]string{"7 3", "", "9 3 2 3"}
+	classDashes  = [3]string{"7 3", "", "10 3 3 3"}
 )
 
 // drawing collects the elements of an SVG picture, in pixels, y downwards.
@@ -44,7 +44,7 @@ func (s style) String() string {
 	}
 	fmt.Fprintf(&b, `fill="%s"`, fill)
 	if s.Stroke != "" {
-		fmt.Fprintf(&b, ` stroke="%s" stroke-width="%s" stroke-linecap="round" stroke-linejoin="round"`, s.Stroke, pixels(s.Width))
+		fmt.Fprintf(&b, ` stroke="%s" stroke-width="%s" stroke-linejoin="round"`, s.Stroke, pixels(s.Width))
 	}
 	if s.Dash != "" {
 		fmt.Fprintf(&b, ` stroke-dasharray="%s"`, s.Dash)
@@ -95,6 +95,10 @@ func (d *drawing) document(title string) template.HTML {
 %[5]s</svg>
 `, pixels(math.Ceil(d.width)), pixels(math.Ceil(d.height)), template.HTMLEscapeString(title), paperColour, d.String()))
 }
+
+// least is the width below which a picture is not shrunk to fit a narrow screen but
+// scrolled: its texts would be hard to read.
+func (d *drawing) least() int { return int(.74 * d.width) }
 
 // sample is a small picture for a key, on the page's own background.
 func sample(draw func(d *drawing)) template.HTML {
