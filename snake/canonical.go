@@ -12,8 +12,8 @@ import (
 // which has no word. Cost: O(runs).
 //
 // Turning a snake graph round reverses the word; reflecting it in a diagonal
-// exchanges the letters. Two snake graphs are isomorphic exactly when their
-// canonical words are equal.
+// exchanges the letters. Up to 6 tiles, where all pairs were searched, graphs
+// with different canonical words are not isomorphic as plain graphs either.
 func (g Graph) Canonical() (contfrac.Word, bool) {
 	w, ok := g.Word()
 	if !ok {

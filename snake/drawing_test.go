@@ -267,7 +267,9 @@ func TestGoldenPictures(t *testing.T) {
 	svg, err := g.SVG(d)
 	require.NoError(t, err)
 	golden(t, "arc.svg", svg)
-	tikz, err := g.TikZ(d)
+	inLaTeX := d
+	inLaTeX.Name = func(l snake.Label) string { return []string{"", "0", `$\infty$`, "1"}[l%4] }
+	tikz, err := g.TikZ(inLaTeX)
 	require.NoError(t, err)
 	golden(t, "arc.tikz", tikz)
 	text, err := g.Text(d)

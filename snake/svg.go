@@ -13,7 +13,7 @@ import (
 // (so they stay apart in grey print), and every ink has its own dash pattern
 // besides.
 var (
-	tints  = []string{"#ffffff", "#f7e3b5", "#b9d4e6", "#dcdfe3", "#f2c9ae", "#cfe3c8"}
+	tints  = []string{"#ffffff", "#fae9bf", "#a6c8de", "#d3d0da", "#f2c9ae", "#cfe3c8"}
 	inks   = []string{"#7b8794", "#a86b00", "#13507d", "#4a5568", "#b3401f", "#2f6b3a"}
 	dashes = []string{"2 4", "7 4", "1.5 3.5", "9 3 2 3", "4 2", "2 2 6 2"}
 )
