@@ -12,6 +12,7 @@
 // entry is the numerator of the fraction, the Continuant of the terms. If one letter is put
 // before a word and one after it (Word.WithEnds), whichever they are, the numerator
 // of the run lengths is the sum of the four entries of the matrix of the word.
+// The same numbers have a second expansion, with signs −, as type Minus.
 //
 // # Size
 //

@@ -87,9 +87,17 @@ func (m Matrix) Transpose() Matrix {
 // Inverse returns the inverse of a matrix of determinant 1 or −1; every other
 // determinant gives ErrDeterminant.
 func (m Matrix) Inverse() (Matrix, error) {
+	inverse, err := m.inverse()
+	if err != nil {
+		return Matrix{}, fmt.Errorf("contfrac: %w", err)
+	}
+	return inverse, nil
+}
+
+func (m Matrix) inverse() (Matrix, error) {
 	det := m.Det()
 	if det.CmpAbs(oneInt) != 0 {
-		return Matrix{}, fmt.Errorf("contfrac: inverse of a matrix of determinant %s: determinant 1 or -1 is accepted: %w", Abbreviate(det), ErrDeterminant)
+		return Matrix{}, fmt.Errorf("inverse of a matrix of determinant %s: determinant 1 or -1 is accepted: %w", Abbreviate(det), ErrDeterminant)
 	}
 	e := m.entries()
 	n := func(x *big.Int) *big.Int { return new(big.Int).Neg(x) }
@@ -109,7 +117,7 @@ func (m Matrix) Pow(n int64) (Matrix, error) {
 	if n < 0 {
 		k = -k
 		var err error
-		if m, err = m.Inverse(); err != nil {
+		if m, err = m.inverse(); err != nil {
 			return Matrix{}, fmt.Errorf("contfrac: power %d: %w", n, err)
 		}
 	}
@@ -176,14 +184,17 @@ func (m Matrix) Factor() (Word, error) {
 	// x/y = [a₀; a₁, …, aₙ], aₙ ≥ 2 or n = 0, and the way there is
 	// R^a₀ L^a₁ R^a₂ … with one letter less in the last run.
 	f := euclid(new(big.Int).Add(e.a, e.b), new(big.Int).Add(e.c, e.d))
-	var b WordBuilder
-	l := R
-	for i, t := range f.All() {
-		if i == f.n-1 {
-			t.Sub(t, oneInt)
-		}
-		b.append(l, t)
-		l = l.Other()
+	b := f.builder(f.n)
+	if last := b.pop(); last.Cmp(oneInt) > 0 {
+		b.push(last.Sub(last, oneInt))
 	}
-	return b.Word(), nil
+	f = b.fraction()
+	switch {
+	case f.n == 0:
+		return Word{}, nil
+	case f.data[0] == 0:
+		f = f.tail()
+		return Word{first: L, runs: f.n, data: f.data}, nil
+	}
+	return Word{first: R, runs: f.n, data: f.data}, nil
 }

@@ -22,7 +22,7 @@ func (r rule) build(terms []*big.Int) (termBuilder, error) {
 	var b termBuilder
 	for _, t := range terms {
 		if err := r.add(&b, t); err != nil {
-			return termBuilder{}, err
+			return termBuilder{}, fmt.Errorf("contfrac: term %d: %w", b.n, err)
 		}
 	}
 	return b, nil
@@ -33,7 +33,7 @@ func (r rule) buildSmall(terms []int64) (termBuilder, error) {
 	var b termBuilder
 	for _, t := range terms {
 		if err := r.add(&b, big.NewInt(t)); err != nil {
-			return termBuilder{}, err
+			return termBuilder{}, fmt.Errorf("contfrac: term %d: %w", b.n, err)
 		}
 	}
 	return b, nil
@@ -42,7 +42,7 @@ func (r rule) buildSmall(terms []int64) (termBuilder, error) {
 // add appends t if the rule allows it.
 func (r rule) add(b *termBuilder, t *big.Int) error {
 	if t == nil || b.n > 0 && t.Cmp(r.least) < 0 {
-		return fmt.Errorf("contfrac: term %d of a %s is %s: any integer first and then integers of at least %s are accepted: %w", b.n, r.name, describe(t), r.least, ErrTerm)
+		return fmt.Errorf("%s in a %s: any integer first and then integers of at least %s are accepted: %w", describe(t), r.name, r.least, ErrTerm)
 	}
 	b.push(t)
 	return nil
