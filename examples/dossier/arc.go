@@ -97,6 +97,12 @@ func arcPicture(s farey.Slope, crossings []farey.Crossing) picture {
 	for _, c := range crossings {
 		points = append(points, c.Left, c.Right)
 	}
+	caption := fmt.Sprintf("The arc of slope %v in the lattice, triangulated by all segments of slopes 0/1, 1/0 and 1/1", s)
+	if len(crossings) > 0 {
+		caption += "; the triangles passed are tinted"
+	} else { // show some of the triangulation all the same
+		points = append(points, start.Sub(farey.Point{X: 1, Y: 1}), end.Add(farey.Point{X: 1, Y: 1}))
+	}
 	l := newLattice(points)
 	far := l.at(float64(l.high.X), float64(l.low.Y))
 	d := &drawing{width: far.x + margin, height: far.y + margin}
@@ -116,19 +122,19 @@ func arcPicture(s farey.Slope, crossings []farey.Crossing) picture {
 	d.line(l.point(start), l.point(end), style{Stroke: inkColour, Width: 2})
 	for _, c := range crossings {
 		x, y := meets(c, p, q)
-		mark(d, l.at(x, y), c.Nearer)
+		mark(d, l.at(x, y), c.Nearer, min(4.6, l.unit/8))
 	}
 	for _, v := range [2]farey.Point{start, end} {
 		at := l.point(v)
 		d.circle(at, 5, style{Fill: inkColour})
-		below := 17.0
-		if v.Y == l.high.Y && l.high.Y > l.low.Y {
+		below := 17.0 // the name stands off the arc
+		if (v == end) == (p >= 0) {
 			below = -17
 		}
 		d.write(spot{at.x, at.y + below}, "middle", 13, inkColour, fmt.Sprintf("(%d,%d)", v.X, v.Y))
 	}
 	return picture{
-		Caption: fmt.Sprintf("The arc of slope %v in the lattice, triangulated by all segments of slopes 0/1, 1/0 and 1/1; the triangles passed are tinted", s),
+		Caption: caption,
 		Least:   d.least(),
 		SVG: d.document(fmt.Sprintf("The arc of slope %v from (0,0) to (%d,%d) in the triangulated lattice, with %s marked",
 			s, q, p, plural(big.NewInt(int64(len(crossings))), "crossing", "crossings"))),
@@ -166,8 +172,7 @@ func meets(c farey.Crossing, p, q int64) (x, y float64) {
 }
 
 // mark draws a crossing point by the side of the end that it is nearer to.
-func mark(d *drawing, at spot, nearer farey.Side) {
-	const r = 4.6
+func mark(d *drawing, at spot, nearer farey.Side, r float64) {
 	outline := style{Stroke: inkColour, Width: 1.6}
 	switch nearer {
 	case farey.Right:
@@ -201,7 +206,7 @@ func arcKey(crossings []farey.Crossing) []keyItem {
 	}
 	for _, m := range marks {
 		if slices.ContainsFunc(crossings, func(c farey.Crossing) bool { return c.Nearer == m.side }) {
-			key = append(key, keyItem{sample(func(d *drawing) { mark(d, spot{17, 8}, m.side) }), m.text})
+			key = append(key, keyItem{sample(func(d *drawing) { mark(d, spot{17, 8}, m.side, 4.6) }), m.text})
 		}
 	}
 	return key

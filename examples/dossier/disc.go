@@ -32,6 +32,9 @@ func discPicture(s farey.Slope) picture {
 		}
 	}
 	caption := fmt.Sprintf("light, the path from the base triangle; dark, the triangle in which %v appears first", s)
+	if drawn == 0 {
+		caption = "dark, the base triangle, where every path begins"
+	}
 	if drawn < discStops {
 		d.triangle(last, style{Fill: "#e5a50a", Stroke: "#a86b00", Width: 1})
 	} else {

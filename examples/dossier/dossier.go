@@ -101,8 +101,8 @@ func newEntry(ctx context.Context, f orbifold.Family, s farey.Slope) (*entry, er
 		e.numberSection, e.sizeSection, e.triangleSection, e.symmetrySection, e.arcSection,
 		e.wordSection, e.snakeSection, e.matrixSection, e.neighbourSection,
 	}
-	for _, make := range sections {
-		part, err := make(ctx)
+	for _, compile := range sections {
+		part, err := compile(ctx)
 		if err != nil {
 			return nil, fmt.Errorf("slope %v: %w", s, err)
 		}

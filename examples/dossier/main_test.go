@@ -41,6 +41,18 @@ func TestMain(m *testing.M) {
 	os.Exit(m.Run())
 }
 
+// TestEffortFollowsTheEnvironment also makes cached results depend on the variable,
+// which what TestMain reads does not.
+func TestEffortFollowsTheEnvironment(t *testing.T) {
+	want := 100
+	if text, ok := os.LookupEnv(scaleVariable); ok {
+		scale, err := strconv.ParseFloat(text, 64)
+		require.NoError(t, err)
+		want = max(10, int(100*scale))
+	}
+	assert.Equal(t, strconv.Itoa(want), flag.Lookup("rapid.checks").Value.String())
+}
+
 // outcome is what one run of the command did.
 type outcome struct {
 	status         int

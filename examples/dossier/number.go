@@ -31,16 +31,16 @@ func (e *entry) numberSection(ctx context.Context) (section, error) {
 	s.add("Digits, bits", "%d, %d", len(n.String()), n.BitLen())
 	s.Table = &table{
 		Caption: "The four routes share as little as possible",
-		Head:    []string{"Route", "Result", "Agrees", "Computed", "In Go"},
+		Head:    []string{"Route", "Agrees", "Result", "Computed", "In Go"},
 		Marked:  -1,
 		Rows: [][]string{
-			{"descent by the exchange rule", digits(n), "yes", "exact", "f.Number(s)"},
+			{"descent by the exchange rule", "yes", digits(n), "exact", "f.Number(s)"},
 			countRow("continuant of the word", c.Continuant(), n, "f.Fraction(s) → Numerator()"),
 			countRow("matchings of the snake graph", c.Matchings(), n, "f.Snake(s) → Count()"),
-			{"upper right entry of the matrix", digits(c.Matrix().B()), yesNo(c.Matrix().B().Cmp(n) == 0), "exact", "f.Matrix(s) → B()"},
+			{"upper right entry of the matrix", yesNo(c.Matrix().B().Cmp(n) == 0), digits(c.Matrix().B()), "exact", "f.Matrix(s) → B()"},
 		},
 	}
-	s.Remark = agreement(s.Table.Rows, 2)
+	s.Remark = agreement(s.Table.Rows, 1)
 	return s, nil
 }
 
@@ -50,9 +50,9 @@ func countRow(name string, c orbifold.Count, n *big.Int, call string) []string {
 	switch c.Method {
 	case orbifold.Exact:
 		value, _ := c.Value()
-		return []string{name, digits(value), yesNo(c.Agrees(n)), "exact", call}
+		return []string{name, yesNo(c.Agrees(n)), digits(value), "exact", call}
 	case orbifold.ModuloPrimes:
-		return []string{name, fmt.Sprintf("%d residues", len(c.Residues())), yesNo(c.Agrees(n)), "modulo primes", call}
+		return []string{name, yesNo(c.Agrees(n)), fmt.Sprintf("%d residues", len(c.Residues())), "modulo primes", call}
 	}
 	return []string{name, "", "", notRun, call}
 }
@@ -92,7 +92,7 @@ func (e *entry) residueSection(ctx context.Context) (section, error) {
 	var s section
 	s.Title = "The number, by its residues"
 	s.add("Bits", "%s", between(lo, hi))
-	s.say("Not held", "a certificate is written for a number only where three such fit into %d bits together; "+
+	s.say("Not held", "the number and what goes with it would pass the %d bits of a certificate; "+
 		"residues and logarithms are no harder at any size", orbifold.MaxCertificateBits)
 	s.Table = &table{
 		Caption: "The routes modulo three primes",

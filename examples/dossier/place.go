@@ -68,7 +68,7 @@ func (e *entry) symmetrySection(context.Context) (section, error) {
 	}
 	if lo, hi, _ := e.family.Domain(); len(e.family.Symmetries()) > 1 {
 		s.add("Representative", "%v", e.family.Representative(e.Slope))
-		s.note("the one in the interval from %v to %v, which has one slope of each class", lo, hi)
+		s.note("the one in the interval from %v to %v, which has one slope of each symmetry class", lo, hi)
 	}
 	s.add("Class of the slope", "%v", e.Class())
 	s.note("p and q are like those of %v modulo 2", e.Class().Slope())

@@ -239,8 +239,8 @@ func TestEquation(t *testing.T) {
 // TestLongArcIsCountedNotDrawn: too long to draw, still with all four routes.
 func TestLongArcIsCountedNotDrawn(t *testing.T) {
 	e := newEntryFor(t, orbifold.Family{}, farey.MustParse("1000/3001"))
-	for _, make := range []func(context.Context) (section, error){e.arcSection, e.snakeSection} {
-		s, err := make(t.Context())
+	for _, compile := range []func(context.Context) (section, error){e.arcSection, e.snakeSection} {
+		s, err := compile(t.Context())
 		require.NoError(t, err)
 		assert.Empty(t, s.Pictures)
 		assert.Contains(t, s.Remark, "5999") // 999 + 3000 + 2000 crossings, as many tiles
@@ -255,7 +255,7 @@ func TestLongRoutesModuloPrimes(t *testing.T) {
 	e := newEntryFor(t, orbifold.Family{}, farey.MustParse("1/150001"))
 	s, err := e.numberSection(t.Context())
 	require.NoError(t, err)
-	assert.Equal(t, []string{"3 residues", "yes", "modulo primes"}, s.Table.Rows[2][1:4])
+	assert.Equal(t, []string{"yes", "3 residues", "modulo primes"}, s.Table.Rows[2][1:4])
 	assert.Equal(t, "All four routes agree.", s.Remark)
 }
 

@@ -45,12 +45,8 @@ func (e *entry) wordSection(context.Context) (section, error) {
 			s.note("R and L, without the free end letters; the middle edge has no weight, so no letter is free")
 		}
 	}
-	runs := fmt.Sprintf("%v", word) // shortened when long
-	if word.NumRuns() <= maxLetters {
-		runs = word.Compact()
-	}
-	s.add("By runs", "%s", runs)
-	s.add("Continued fraction", "%v", fraction)
+	s.add("By runs", "%s", fit(word.Compact(), word))
+	s.add("Continued fraction", "%s", fit(fraction.String(), fraction))
 	s.note("the runs of the word, taken with L in the middle and its first and last letter doubled; its numerator is N")
 	if fraction.Len() <= maxConvergents {
 		s.Table = &table{Caption: "Convergents", Head: []string{"Term", "Numerator", "Denominator"}, Marked: fraction.Len() - 1}
@@ -60,6 +56,14 @@ func (e *entry) wordSection(context.Context) (section, error) {
 		}
 	}
 	return s, nil
+}
+
+// fit is the whole text of a value when that is short, else what %v makes of the value.
+func fit(whole string, value any) string {
+	if len(whole) <= maxLetters {
+		return whole
+	}
+	return fmt.Sprintf("%v", value)
 }
 
 // withMiddle writes a short word with M for the letters of the middle crossing,
