@@ -9,8 +9,8 @@
 // family with weights (0,0,0) of package orbifold, which does all the work; here
 // are the names, the conversions between the labellings, and nothing that orbifold
 // does already. What is not here (residues, logarithms, comparison, words, snake
-// graphs, matrices, certificates, forms that take a context) is had from [Family]
-// at a lattice slope.
+// graphs, matrices, certificates, a limit on results, a context for Number) is had
+// from [Family] at a lattice slope.
 //
 // # Two labellings
 //

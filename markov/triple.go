@@ -30,11 +30,11 @@ func NewTriple(a, b, c *big.Int) (Triple, error) {
 	return Triple{solution}, nil
 }
 
-// TripleAt returns the Markov triple with the number at the index as its largest:
-// the other two are the numbers at the Farey parents of the index. Every triple
-// belongs to one index so. The index 0/1 has (1, 1, 1), 1/1 has (1, 1, 2), 1/2 has
-// (1, 2, 5). An index outside [0, 1] is ErrIndex; numbers with too many bits are
-// ErrTooLarge. Cost: that of Frobenius.
+// TripleAt returns the Markov triple of an index in [0, 1]: its largest number is
+// the one at the index, the other two are those at the Farey parents of the index.
+// 0/1 has (1, 1, 1), 1/1 has (1, 1, 2), 1/2 has (1, 2, 5). Each triple is that of
+// exactly one index. An index outside [0, 1] is ErrIndex; numbers with too many bits
+// are ErrTooLarge. Cost: that of Frobenius.
 func TripleAt(index farey.Slope) (Triple, error) {
 	lattice, err := FromIndex(index)
 	if err != nil {
@@ -53,11 +53,11 @@ func (t Triple) Numbers() (a, b, c *big.Int) {
 	return n[0], n[1], n[2]
 }
 
-// Neighbours returns the triples one Vieta jump away: those with a, b and c,
-// in this order, exchanged for the other root of the equation. The jump at c gives the parent and the
-// other two give larger triples, (1, 1, 1) excepted, where each gives (1, 1, 2), and
-// (1, 1, 2), where the jumps at a and at b both give (1, 2, 5).
-// Cost: three multiplications.
+// Neighbours returns the triples one Vieta jump away: those with a, b and c, in
+// this order, exchanged for the other root of the equation. The jump at c gives the
+// parent, the other two give triples with a larger c. Two neighbours of (1, 1, 2)
+// are equal, (1, 2, 5), and all three of (1, 1, 1), which has no parent: (1, 1, 2).
+// Cost: a few multiplications.
 func (t Triple) Neighbours() [3]Triple {
 	var jumps [3]Triple
 	for i, class := range t.order() {
@@ -81,9 +81,8 @@ func (t Triple) Parent() (parent Triple, ok bool) {
 }
 
 // Index returns the index of the largest number, as a member of this triple:
-// TripleAt(t.Index()) is t. It is found by descent from parent to parent, so that no
-// number but these is looked at. Cost: one multiplication for each step to (1, 1, 1);
-// IndexContext can be stopped.
+// TripleAt(t.Index()) is t. It is found by descent from parent to parent, at the
+// cost of a multiplication for each step to (1, 1, 1); IndexContext can be stopped.
 func (t Triple) Index() farey.Slope {
 	index, _ := t.IndexContext(context.Background())
 	return index
