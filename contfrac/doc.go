@@ -18,7 +18,8 @@
 //
 // Words and fractions are held packed, about a byte a run or a term, and are passed by
 // value. Products of long sequences go by balanced trees, expansions by a
-// half-gcd, and every multiplication of large integers through Product.
+// half-gcd, and every multiplication of large integers through Product. The halves
+// of a product tree from about 130 000 bits on are worked out at the same time.
 //
 // # Conventions
 //
