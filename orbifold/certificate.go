@@ -125,7 +125,13 @@ func (f Family) Certify(s farey.Slope) (Certificate, error) {
 // CertifyContext is Certify that stops between two routes when ctx ends, with
 // its error.
 func (f Family) CertifyContext(ctx context.Context, s farey.Slope) (Certificate, error) {
-	f = f.WithLimit(min(f.Limit(), MaxCertificateBits))
+	ctx = contextOf(ctx)
+	// One number has to fit; the three of a triangle and the four entries of a
+	// matrix may together have more.
+	if err := f.WithLimit(min(f.Limit(), MaxCertificateBits)).fits(ctx, s, 1); err != nil {
+		return Certificate{}, err
+	}
+	f = f.WithLimit(4 * (MaxCertificateBits + 1))
 	c := claims{family: f, slope: s, path: s.Path()}
 	for _, route := range [...]func(context.Context, *claims) error{
 		f.certifyDescent, f.certifyContinuant, f.certifyMatchings, f.certifyMatrix,
@@ -208,7 +214,7 @@ func (f Family) certifyMatchings(ctx context.Context, c *claims) error {
 }
 
 func (f Family) certifyMatrix(ctx context.Context, c *claims) (err error) {
-	if c.matrix, err = f.WithLimit(4*MaxCertificateBits).MatrixContext(ctx, c.slope); err != nil {
+	if c.matrix, err = f.MatrixContext(ctx, c.slope); err != nil {
 		return err
 	}
 	c.root = c.matrix.A()
@@ -316,6 +322,7 @@ func (c Certificate) Verify() error { return c.VerifyContext(context.Background(
 
 // VerifyContext is Verify that stops when ctx ends, with its error.
 func (c Certificate) VerifyContext(ctx context.Context) error {
+	ctx = contextOf(ctx)
 	if c.c == nil {
 		return fmt.Errorf("orbifold: an empty certificate: %w", ErrCertificate)
 	}

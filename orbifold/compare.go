@@ -25,6 +25,7 @@ func (f Family) Compare(s, t farey.Slope) (int, error) {
 
 // CompareContext is Compare that stops when ctx ends, with its error.
 func (f Family) CompareContext(ctx context.Context, s, t farey.Slope) (int, error) {
+	ctx = contextOf(ctx)
 	if f.Equivalent(s, t) {
 		return 0, nil
 	}

@@ -197,6 +197,25 @@ func deadline(ctx context.Context) time.Time {
 	return d
 }
 
+func TestNilContextNeverEnds(t *testing.T) {
+	f, s := orbifold.Family{}, farey.MustParse("3/7")
+	var none context.Context
+	assertEqualInt(t, big.NewInt(169), must(f.NumberContext(none, s))(t))
+	must(f.MatrixContext(none, s))(t)
+	must(f.Identify(none, big.NewInt(5)))(t)
+	must(f.CompareContext(none, s, farey.MustParse("2/7")))(t)
+	_, _, err := f.LogBigContext(none, s, 64)
+	require.NoError(t, err)
+	require.NoError(t, must(f.CertifyContext(none, s))(t).VerifyContext(none))
+	must(must(f.Triple(s.Path().Triangle()))(t).PathContext(none))(t)
+}
+
+func TestEquationAsText(t *testing.T) {
+	assert.Equal(t, "x² + y² + z² = 3xyz", orbifold.Family{}.Equation())
+	assert.Equal(t, "x² + y² + z² + yz + zx + xy = 6xyz", orbifold.MustNew(1, 1, 1).Equation())
+	assert.Equal(t, "x² + y² + z² + 2yz + xy = 6xyz", orbifold.MustNew(2, 0, 1).Equation())
+}
+
 func TestErrorsAreNotNested(t *testing.T) {
 	all := []error{
 		orbifold.ErrWeight, orbifold.ErrTooLarge, orbifold.ErrNoCrossing, orbifold.ErrNotSolution, orbifold.ErrNotPositive,

@@ -117,6 +117,25 @@ func (f Family) String() string {
 	return fmt.Sprintf("(%d,%d,%d)", f.weights[0], f.weights[1], f.weights[2])
 }
 
+// Equation returns equation (E) of the family as text, with the weights put in:
+// "x² + y² + z² + 2yz + xy = 6xyz" for (2,0,1), with x, y, z the numbers at the classes of 0/1, 1/0
+// and 1/1.
+func (f Family) Equation() string {
+	var b strings.Builder
+	b.WriteString("x² + y² + z²")
+	for c, product := range [3]string{"yz", "zx", "xy"} {
+		switch k := f.weights[c]; k {
+		case 0:
+		case 1:
+			b.WriteString(" + " + product)
+		default:
+			fmt.Fprintf(&b, " + %d%s", k, product)
+		}
+	}
+	fmt.Fprintf(&b, " = %vxyz", f.K())
+	return b.String()
+}
+
 // MarshalText returns the form of String. The limit is no part of it.
 func (f Family) MarshalText() ([]byte, error) { return []byte(f.String()), nil }
 

@@ -36,9 +36,6 @@ func (x rule[T]) fan(pivot, y1, y0 vertex[T], step func() bool) fan[T] {
 	return fan[T]{x: x, pivot: pivot, t: x.trace(pivot), y: [2]vertex[T]{y0, y1}, step: step}
 }
 
-// class returns the class of arc n.
-func (f fan[T]) class(n *big.Int) farey.Class { return f.y[n.Bit(0)].class }
-
 // pair returns the arcs n and n+1, for two multiplications of the size of the
 // result at the top.
 func (f fan[T]) pair(n *big.Int) (lo, hi vertex[T]) {

@@ -22,6 +22,7 @@ func (f Family) Identify(ctx context.Context, n *big.Int) ([]farey.Slope, error)
 	if n == nil || n.Sign() <= 0 {
 		return nil, fmt.Errorf("orbifold: slopes that carry %s: %w", brief(n), ErrNotPositive)
 	}
+	ctx = contextOf(ctx)
 	var found []farey.Slope
 	for node := range f.walk(true, atMost(n)) {
 		if err := ctx.Err(); err != nil {

@@ -55,7 +55,7 @@ func (f Family) LogBig(s farey.Slope, prec uint) (lo, hi *big.Float, err error) 
 
 // LogBigContext is LogBig that stops when ctx ends, with its error.
 func (f Family) LogBigContext(ctx context.Context, s farey.Slope, prec uint) (lo, hi *big.Float, err error) {
-	l, err := f.logSpan(ctx, s, prec)
+	l, err := f.logSpan(contextOf(ctx), s, prec)
 	if err != nil {
 		return nil, nil, err
 	}

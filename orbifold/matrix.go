@@ -29,6 +29,7 @@ func (f Family) Matrix(s farey.Slope) (contfrac.Matrix, error) {
 
 // MatrixContext is Matrix that stops when ctx ends, with its error.
 func (f Family) MatrixContext(ctx context.Context, s farey.Slope) (contfrac.Matrix, error) {
+	ctx = contextOf(ctx)
 	if err := f.fits(ctx, s, 4); err != nil {
 		return contfrac.Matrix{}, err
 	}

@@ -27,6 +27,7 @@ func (f Family) Number(s farey.Slope) (*big.Int, error) {
 // NumberContext is Number that stops when ctx ends, with its error; a single
 // multiplication is not interrupted.
 func (f Family) NumberContext(ctx context.Context, s farey.Slope) (*big.Int, error) {
+	ctx = contextOf(ctx)
 	if err := f.fits(ctx, s, 1); err != nil {
 		return nil, err
 	}
@@ -79,6 +80,14 @@ func checkModulus(m *big.Int) error {
 func (f Family) exact() rule[*big.Int] { return newRule(f, ring[*big.Int](integers{}), exactJumps) }
 
 func always() bool { return true }
+
+// contextOf returns ctx, or the background context for nil.
+func contextOf(ctx context.Context) context.Context {
+	if ctx == nil {
+		return context.Background()
+	}
+	return ctx
+}
 
 // running returns a function that tells whether ctx still runs.
 func running(ctx context.Context) func() bool { return func() bool { return ctx.Err() == nil } }

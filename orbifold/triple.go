@@ -136,6 +136,7 @@ func (t Triple) Path() farey.Path {
 // PathContext is Path that stops when ctx ends, with its error: a triple far
 // out along one fan has a long way back.
 func (t Triple) PathContext(ctx context.Context) (farey.Path, error) {
+	ctx = contextOf(ctx)
 	var flipped []farey.Class
 	for c, ok := t.Largest(); ok; c, ok = t.Largest() {
 		if err := ctx.Err(); err != nil {

@@ -24,7 +24,7 @@ type walker struct {
 	constraints
 	look  bool // constraints have to be asked
 	sink  func(*Visit) bool
-	cut   func(u, w, o *vertex) // told of every edge where the walk turns back; may be nil
+	cut   func(u, w, o *vertex) // told of every edge where the walk turns back, o behind it; may be nil
 	halt  *atomic.Bool          // set from outside to stop
 	over  bool                  // stopped, by sink or halt
 	v     Visit
@@ -106,7 +106,7 @@ func (w *walker) frontOf(e edge) *arc {
 	return r
 }
 
-// turn tells that the walk goes no further at an edge.
+// turn tells that the walk goes no further at the edge u, v with o behind.
 func (w *walker) turn(u, v, o *vertex) {
 	if w.cut != nil {
 		w.cut(u, v, o)
@@ -151,6 +151,7 @@ func (w *walker) deep(e edge) bool {
 	if w.look && w.constraints.skip(x.u.at, x.y1.at) {
 		return true
 	}
+	w.v.base = false
 	w.fan(0)
 	return !w.over
 }
@@ -164,46 +165,50 @@ func (w *walker) fan(d int) {
 		return
 	}
 	f := &w.frame[d]
-	u := f.u
-	y0, y1 := f.y[0], f.y[1]
-	p := w.about(&u)
-	c1, c0 := y1.at.class(), y0.at.class()
+	p := w.about(&f.u)
+	uLo, uHi, uAt := f.u.lo, f.u.hi, f.u.at
+	y0, y1 := &f.y[0], &f.y[1]
+	c0, c1 := y0.at.class(), y1.at.class()
 	s64, t64 := p.s64[c1], p.s64[c0]
 	s61, t61 := p.s61[c1], p.s61[c0]
+	// The two latest arcs in registers: the one behind, and the end of the edge.
+	a64, a61 := y0.r64, y0.r61
+	b64, b61, lo, hi, at := y1.r64, y1.r61, y1.lo, y1.hi, y1.at
 	most, sure := w.most, w.sure
 	for i := uint32(2); ; i++ {
-		y2 := vertex{
-			lo: y1.lo + u.lo, hi: y1.hi + u.hi, at: y1.at + u.at,
-			r64: p.t64*y1.r64 - s64 - y0.r64,
-			r61: mulSub61(p.t61, y1.r61, s61, y0.r61),
-		}
-		if y2.lo > most || y2.hi > sure && !w.exact.within(y2.at.slope()) {
-			w.turn(&u, &y1, &y0)
+		before := lo
+		lo, hi, at = lo+uLo, hi+uHi, at+uAt
+		if lo > most || hi > sure && !w.exact.within(at.slope()) {
+			w.turn(&f.u, &f.y[(i-1)&3], &f.y[(i-2)&3])
 			return
 		}
-		f.y[i&3] = y2
-		if w.look && !w.constraints.has(y2.at) {
-			// Outside, but what is in front of it need not be.
-		} else if !w.show(f, i, false) {
-			return
+		a64, b64 = b64, p.t64*b64-s64-a64
+		a61, b61 = b61, mulSub61(p.t61, b61, s61, a61)
+		s64, t64 = t64, s64
+		s61, t61 = t61, s61
+		y := &f.y[i&3]
+		y.r64, y.r61, y.lo, y.hi, y.at = b64, b61, lo, hi, at
+		if !w.look || w.constraints.has(at) {
+			w.v.frame, w.v.i = f, i
+			if !w.sink(&w.v) {
+				w.over = true
+				return
+			}
 		}
-		if y1.lo+y2.lo > most {
-			w.turn(&y1, &y2, &u)
-		} else if !w.look || !w.constraints.skip(y1.at, y2.at) {
+		if before+lo > most {
+			w.turn(&f.y[(i-1)&3], y, &f.u)
+		} else if !w.look || !w.constraints.skip(at-uAt, at) {
 			g := &w.frame[d+1]
-			g.u, g.uLo, g.uHi = y1, y1.lo, y1.hi
-			g.y[0], g.y[1] = u, y2
+			g.u, g.y[0], g.y[1] = f.y[(i-1)&3], f.u, *y
+			g.uLo, g.uHi = g.u.lo, g.u.hi
 			g.y[0].lo, g.y[0].hi = f.uLo, f.uHi
 			w.fan(d + 1)
 			if w.over {
 				return
 			}
 		}
-		if w.look && w.constraints.skip(u.at, y2.at) {
+		if w.look && w.constraints.skip(uAt, at) {
 			return
 		}
-		y0, y1 = y1, y2
-		s64, t64 = t64, s64
-		s61, t61 = t61, s61
 	}
 }
