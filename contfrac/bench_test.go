@@ -61,9 +61,10 @@ func BenchmarkContinuant(b *testing.B) {
 func BenchmarkFromRatio(b *testing.B) {
 	run := func(name string, p, q *big.Int) {
 		b.Run(name, func(b *testing.B) {
+			var terms []*big.Int
 			loop := func() {
 				x, y, t, r := new(big.Int).Set(p), new(big.Int).Set(q), new(big.Int), new(big.Int)
-				var terms []*big.Int
+				terms = terms[:0]
 				for y.Sign() != 0 {
 					t.QuoRem(x, y, r)
 					terms = append(terms, new(big.Int).Set(t))
@@ -77,7 +78,10 @@ func BenchmarkFromRatio(b *testing.B) {
 				slow = seconds(loop)
 			}
 			for b.Loop() {
-				_, _ = contfrac.FromRatio(p, q)
+				f, _ := contfrac.FromRatio(p, q)
+				if f.Len() != len(terms) && f.Len() != len(terms)-1 {
+					b.Fatalf("%d terms, the loop has %d", f.Len(), len(terms))
+				}
 			}
 			b.ReportMetric(slow/seconds(func() { _, _ = contfrac.FromRatio(p, q) }), "times-faster")
 		})

@@ -79,7 +79,12 @@ func (m *Matrix) UnmarshalJSON(text []byte) error {
 			return fmt.Errorf("contfrac: matrix in JSON, entry %d: %w", i+1, err)
 		}
 	}
-	if !s.take(']') || !s.take(']') || !s.atEnd() {
+	for range 2 {
+		if !s.take(']') {
+			return badMatrixJSON(text)
+		}
+	}
+	if !s.atEnd() {
 		return badMatrixJSON(text)
 	}
 	*m = Matrix{e: &entries{n[0], n[1], n[2], n[3]}}
