@@ -31,8 +31,8 @@ func (h Hasse) SVG(d Drawing) (string, error) {
 			len(h.nodes), tileCount(n), MaxDrawnTiles, MaxLatticeTiles, ErrTooLong)
 	}
 	const (
-		unit, pad  = 15.0, 7.0
-		across, up = 20.0, 44.0 // gaps between boxes
+		unit, pad  = 18.0, 8.0
+		across, up = 22.0, 46.0 // gaps between boxes
 	)
 	d.Name, d.EdgeNames, d.Numbers = nil, false, false
 	pictures := make([]*picture, len(h.nodes))

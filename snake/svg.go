@@ -38,7 +38,8 @@ func shade(l Label) int {
 
 // SVG draws the graph as a self-contained SVG image: tiles tinted by the label
 // of their diagonal, diagonals dashed in a pattern of the label, and what the
-// Drawing asks for.
+// Drawing asks for. No element has an id, so any number of pictures can stand in
+// one page.
 //
 // It returns [ErrTooLong] past [MaxDrawnTiles] tiles and [ErrNotMatching] for a
 // matching of another graph.
@@ -109,10 +110,36 @@ func (c *canvas) polygon(s []spot, attributes string) {
 	c.add(`<polygon points="%s" %s/>`, strings.Join(points, " "), attributes)
 }
 
+// hatching draws slanted lines across a convex tile, at right angles to the
+// diagonal. They are lines and no fill pattern: a pattern needs an id, and the ids
+// of several pictures in one page would be one and the same.
+func (c *canvas) hatching(tile []spot) {
+	lines := math.Round(c.unit / 10) // to a tile side
+	low, high := math.Inf(1), math.Inf(-1)
+	for _, s := range tile {
+		low, high = min(low, s.y-s.x), max(high, s.y-s.x)
+	}
+	var path strings.Builder
+	for k := math.Ceil(low*lines - .5); k+.5 < high*lines; k++ {
+		offset := (k + .5) / lines // the line y = x + offset
+		command := "M"
+		for i, a := range tile {
+			b := tile[(i+1)%len(tile)]
+			u, v := a.y-a.x-offset, b.y-b.x-offset
+			if (u < 0) != (v < 0) {
+				s := between(a, b, u/(u-v))
+				path.WriteString(command + c.x(s) + " " + c.y(s))
+				command = "L"
+			}
+		}
+	}
+	c.add(`<path d="%s" fill="none" stroke="%s" stroke-width="%s" stroke-opacity=".38"/>`, path.String(), hatch, decimal(max(c.unit/40, .9)))
+}
+
 // text writes a text centred at a spot, with a halo of the given colour.
 func (c *canvas) text(s spot, size float64, ink, halo, text string) {
 	c.add(`<text x="%s" y="%s" dy=".35em" font-size="%s" fill="%s" stroke="%s" stroke-width="%s" paint-order="stroke" stroke-linejoin="round" text-anchor="middle">%s</text>`,
-		c.x(s), c.y(s), decimal(size), ink, halo, decimal(size/4), escape(text))
+		c.x(s), c.y(s), decimal(size), ink, halo, decimal(size*.4), escape(text))
 }
 
 // escape makes a text safe inside an XML element: characters that XML does not
@@ -143,10 +170,9 @@ func (c *canvas) arrow(a, b spot, part float64) {
 func (c *canvas) document(width, height float64, title string) string {
 	return fmt.Sprintf(`<svg xmlns="http://www.w3.org/2000/svg" width="%s" height="%s" viewBox="0 0 %s %s" role="img" font-family="'DejaVu Sans', Verdana, sans-serif">
 <title>%s</title>
-<defs><pattern id="flip" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)"><line x1="0" y1="0" x2="0" y2="7" stroke="%s" stroke-width="1.6" stroke-opacity=".38"/></pattern></defs>
 <rect width="100%%" height="100%%" fill="%s"/>
 %s</svg>
-`, decimal(width), decimal(height), decimal(width), decimal(height), escape(title), hatch, paper, c.String())
+`, decimal(width), decimal(height), decimal(width), decimal(height), escape(title), paper, c.String())
 }
 
 // draw draws a laid out graph: tiles, hatching, diagonals, edges, vertices and
@@ -164,7 +190,7 @@ func (c *canvas) draw(p *picture) {
 		for _, t := range p.tiles {
 			if p.Matching.Flipped(t.Index) {
 				k := t.Corners()
-				c.polygon([]spot{p.at(k[0]), p.at(k[1]), p.at(k[2]), p.at(k[3])}, `fill="url(#flip)"`)
+				c.hatching([]spot{p.at(k[0]), p.at(k[1]), p.at(k[2]), p.at(k[3])})
 			}
 		}
 	}
