@@ -61,9 +61,7 @@ type picture struct {
 	Caption string
 	Key     []keyItem
 	SVG     template.HTML
-	Image   template.URL // instead of SVG: a picture that brings its own definitions
-	Alt     string       // what Image shows
-	Least   int          // pixels of width below which it is scrolled, not shrunk
+	Least   int // pixels of width below which it is scrolled, not shrunk
 	Text    string
 }
 

@@ -1,7 +1,6 @@
 package main
 
 import (
-	"fmt"
 	"strings"
 
 	"example.com/onecusp/farey"
@@ -18,7 +17,7 @@ func sign(c farey.Class) string { return [3]string{"0", "∞", "1"}[c%3] }
 func familyFacts(f orbifold.Family) []fact {
 	var s section
 	s.add("Weights", "k₀ = %d,  k∞ = %d,  k₁ = %d,  K = %v", f.Weight(farey.Zero), f.Weight(farey.Infinity), f.Weight(farey.One), f.K())
-	s.add("Equation", "%s", equation(f))
+	s.add("Equation", "%s", f.Equation())
 	s.say("Its unknowns", "x, y, z are the numbers at the classes of 0/1, 1/0 and 1/1; the base triangle {0/1, 1/0, 1/1} carries 1, 1, 1")
 	s.say("Symmetries", "%s", symmetryList(f))
 	labelling := "Slopes are lattice slopes: p/q is the arc from (0,0) to (q,p)."
@@ -27,23 +26,6 @@ func familyFacts(f orbifold.Family) []fact {
 	}
 	s.say("Labelling", "%s", labelling)
 	return s.Facts
-}
-
-// equation writes (E) for the weights of f, terms of weight 0 left out.
-func equation(f orbifold.Family) string {
-	var b strings.Builder
-	b.WriteString("x² + y² + z²")
-	for i, product := range [3]string{"yz", "zx", "xy"} {
-		switch k := f.Weight(classes[i]); k {
-		case 0:
-		case 1:
-			b.WriteString(" + " + product)
-		default:
-			fmt.Fprintf(&b, " + %d%s", k, product)
-		}
-	}
-	fmt.Fprintf(&b, " = %vxyz", f.K())
-	return b.String()
 }
 
 func symmetryList(f orbifold.Family) string {

@@ -232,7 +232,7 @@ func TestEquation(t *testing.T) {
 		{2, 0, 1}: "x² + y² + z² + 2yz + xy = 6xyz",
 		{0, 1, 0}: "x² + y² + z² + zx = 4xyz",
 	} {
-		assert.Equal(t, want, equation(orbifold.MustNew(weights[0], weights[1], weights[2])))
+		assert.Equal(t, want, familyFacts(orbifold.MustNew(weights[0], weights[1], weights[2]))[1].Value)
 	}
 }
 

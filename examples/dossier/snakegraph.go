@@ -2,7 +2,6 @@ package main
 
 import (
 	"context"
-	"encoding/base64"
 	"fmt"
 	"html/template"
 	"math/big"
@@ -43,14 +42,11 @@ func (e *entry) snakeSection(context.Context) (section, error) {
 	}
 	p := picture{
 		Caption: "The snake graph with its minimal matching, thick; the sign in a tile, its tint and its dashed diagonal are the class of the edge crossed (0, ∞ or 1)",
-		// As an image: several such pictures share a page, and each brings definitions of its own.
-		Image: template.URL("data:image/svg+xml;base64," + base64.StdEncoding.EncodeToString([]byte(svg))),
-		Alt:   fmt.Sprintf("Snake graph of %s with its minimal matching", plural(tiles, "tile", "tiles")),
-		Least: leastTile * columns(graph),
+		SVG:     template.HTML(svg),
+		Least:   leastTile * columns(graph),
 	}
 	if tiles.Sign() == 0 {
 		p.Caption = "The single edge, the graph of an arc that crosses nothing, with its one matching"
-		p.Alt = "A single matched edge"
 	}
 	if tiles.Cmp(big.NewInt(maxTextTiles)) <= 0 {
 		if p.Text, err = graph.Text(drawn); err != nil {
