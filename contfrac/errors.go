@@ -17,6 +17,8 @@ var (
 	ErrDeterminant = errors.New("determinant out of range")
 	// ErrNegativeEntry: a matrix has a negative entry where none may be.
 	ErrNegativeEntry = errors.New("negative matrix entry")
+	// ErrTrace: a matrix that is not hyperbolic, or has a negative trace.
+	ErrTrace = errors.New("trace out of range")
 )
 
 // Limits on what is read, and on what is made out of something much shorter.
