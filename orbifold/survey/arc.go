@@ -22,8 +22,11 @@ func (s *scale) arc(n *big.Int, at coords) *arc {
 	return x
 }
 
-// front returns the arc in front of the edge, by (X).
-func (s *scale) front(e edge) *arc {
+// front returns the arc in front of the edge.
+func (s *scale) front(e edge) *arc { return s.arc(s.frontNumber(e), e.a.v.at+e.b.v.at) }
+
+// frontNumber returns the number of the arc in front of the edge, by (X).
+func (s *scale) frontNumber(e edge) *big.Int {
 	n := new(big.Int).Mul(s.k, e.a.n)
 	n.Mul(n, e.b.n)
 	for _, x := range [...]struct{ v, w *arc }{{e.a, e.b}, {e.b, e.a}} {
@@ -32,7 +35,7 @@ func (s *scale) front(e edge) *arc {
 			n.Sub(n, kw.Mul(kw, x.w.n))
 		}
 	}
-	return s.arc(n.Sub(n, e.c.n), e.a.v.at+e.b.v.at)
+	return n.Sub(n, e.c.n)
 }
 
 // behind returns the two edges of the triangle of e and its front that lie

@@ -15,7 +15,7 @@ type piece struct {
 	edge   edge
 	split  []edge // of the top piece
 	top    bool
-	whole  bool // the top piece is all there is
+	whole  bool    // the top piece is all there is
 	load   float64 // number of slopes, about
 	inside int     // order of making, for ties
 }

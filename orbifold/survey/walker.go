@@ -25,6 +25,7 @@ type walker struct {
 	look  bool // constraints have to be asked
 	sink  func(*Visit) bool
 	cut   func(u, w, o *vertex) // told of every edge where the walk turns back, o behind it; may be nil
+	far   func(edge)            // takes settled edges instead of the walk; may be nil
 	halt  *atomic.Bool          // set from outside to stop
 	over  bool                  // stopped, by sink or halt
 	v     Visit
@@ -121,7 +122,9 @@ func (w *walker) tree(e edge) bool {
 		e := w.stack[len(w.stack)-1]
 		w.stack = w.stack[:len(w.stack)-1]
 		if w.scale.settled(e.a.n, e.b.n, e.c.n) {
-			if !w.deep(e) {
+			if w.far != nil {
+				w.far(e)
+			} else if !w.deep(e) {
 				return false
 			}
 			continue

@@ -1,0 +1,223 @@
+package survey
+
+import (
+	"context"
+	"fmt"
+	"math/big"
+	"slices"
+	"sort"
+
+	"example.com/onecusp/orbifold"
+)
+
+// MaxBounds is the number of bounds that one table may have.
+const MaxBounds = 1 << 12
+
+// Count returns the exact number of slopes in Q ∪ {∞} whose number is at most
+// bound, one for each symmetry class. Bounds have to be at least 1 and at
+// most MaxBoundBits bits long (ErrBound).
+//
+// Not each of them is visited: behind the edges where logarithms add up, the
+// slopes are the primitive vectors m·u + n·w in a triangle, counted by Möbius
+// inversion, once with each end of the enclosures. Where the two counts
+// differ, the slopes behind the edge are visited and those at the bound are
+// decided exactly. Cost: O(x·log x) divisions for bounds of x bits, against x² slopes.
+func Count(ctx context.Context, f orbifold.Family, bound *big.Int) (*big.Int, error) {
+	if bound == nil {
+		return nil, fmt.Errorf("survey: count up to nothing: want a bound of at least 1: %w", ErrBound)
+	}
+	rows, err := Table(ctx, f, []*big.Int{bound}, Options{})
+	if err != nil {
+		return nil, err
+	}
+	return rows[0].Slopes, nil
+}
+
+// Row is one line of a table of counts.
+type Row struct {
+	Bound  *big.Int
+	Slopes *big.Int // numbers ≤ Bound, one slope for each symmetry class
+	All    *big.Int // the same, all slopes
+
+	// X is about ln(K·Bound), the length up to which Bound reaches: All grows
+	// like G·X² with the constant of Growth.
+	X float64
+}
+
+// Table returns the counts of Count at many bounds, at most MaxBounds, in one walk
+// near the base. The rows come in the order of the bounds.
+func Table(ctx context.Context, f orbifold.Family, bounds []*big.Int, o Options) ([]Row, error) {
+	o, err := o.normal()
+	if err != nil {
+		return nil, err
+	}
+	if len(bounds) > MaxBounds {
+		return nil, fmt.Errorf("survey: table of %d bounds: want at most %d: %w", len(bounds), MaxBounds, ErrOptions)
+	}
+	var largest *big.Int
+	for _, b := range bounds {
+		if b == nil {
+			b = new(big.Int)
+		}
+		if err := Up(f, b).check(); err != nil {
+			return nil, err
+		}
+		if largest == nil || b.Cmp(largest) > 0 {
+			largest = b
+		}
+	}
+	if largest == nil {
+		return nil, nil
+	}
+	w, err := newWalker(Up(f, largest))
+	if err != nil {
+		return nil, err
+	}
+	defer context.AfterFunc(ctx, func() { w.halt.Store(true) })()
+
+	// One column for each bound, from the smallest.
+	order := make([]int, len(bounds))
+	for i := range order {
+		order[i] = i
+	}
+	sort.SliceStable(order, func(i, j int) bool { return bounds[order[i]].Cmp(bounds[order[j]]) < 0 })
+	columns := make([]column, len(bounds))
+	for i, j := range order {
+		columns[i].scale = w.scale.upTo(bounds[j])
+	}
+	group := len(f.Symmetries())
+
+	// Near the base every slope is looked at.
+	edges := w.near(func(at coords, n *big.Int) {
+		i := sort.Search(len(columns), func(i int) bool { return n.Cmp(columns[i].scale.bound) <= 0 })
+		if i == len(columns) {
+			return // not reached: the walk stops at the largest bound
+		}
+		columns[i].near++
+		p, q := at.p(), at.q()
+		if max(p, -p, q) <= 2 {
+			columns[i].orbits += int64(len(f.Orbit(at.slope())))
+		} else {
+			columns[i].orbits += int64(group)
+		}
+	})
+	if w.halt.Load() {
+		return nil, fmt.Errorf("survey: count: %w", context.Cause(ctx))
+	}
+
+	entries := make([]entry, len(edges))
+	reach := int64(0)
+	for i, e := range edges {
+		entries[i] = w.enter(e)
+		reach = max(reach, w.most/(entries[i].u.lo+entries[i].y1.lo))
+	}
+	mu := moebius(reach)
+	far := make([][]int64, len(entries)) // by entry and column
+	walkers := make([]*walker, o.Workers)
+	err = pool(ctx, o.Workers, len(entries), func(worker, job int) error {
+		if walkers[worker] == nil {
+			walkers[worker] = w.clone()
+		}
+		counts := make([]int64, len(columns))
+		for i := range columns {
+			var err error
+			if counts[i], err = walkers[worker].behindEntry(columns[i].scale, entries[job], mu); err != nil {
+				return err
+			}
+			if w.halt.Load() {
+				return context.Cause(ctx)
+			}
+		}
+		far[job] = counts
+		return nil
+	})
+	if err != nil {
+		return nil, fmt.Errorf("survey: count: %w", err)
+	}
+	rows := make([]Row, len(bounds))
+	var near, orbits int64
+	for i, j := range order {
+		near, orbits = near+columns[i].near, orbits+columns[i].orbits
+		sum := new(big.Int)
+		for _, counts := range far {
+			sum.Add(sum, big.NewInt(counts[i]))
+		}
+		all := new(big.Int).Mul(sum, big.NewInt(int64(group)))
+		lo, _ := columns[i].scale.nats(columns[i].scale.sure, columns[i].scale.sure)
+		k, _ := columns[i].scale.nats(2*w.kLo, 2*w.kLo) // ln K
+		rows[j] = Row{
+			Bound:  new(big.Int).Set(bounds[j]),
+			Slopes: sum.Add(sum, big.NewInt(near)),
+			All:    all.Add(all, big.NewInt(orbits)),
+			X:      lo + k,
+		}
+	}
+	return rows, nil
+}
+
+// column counts the slopes for one bound.
+type column struct {
+	scale        *scale
+	near, orbits int64 // near the base, above the next smaller bound
+}
+
+// upTo returns the same units with another bound.
+func (s *scale) upTo(bound *big.Int) *scale {
+	c := *s
+	c.bound = new(big.Int).Set(bound)
+	c.sure, c.most = s.log(new(big.Int).Mul(s.k, bound))
+	c.exact = &boundary{family: s.family, bound: c.bound}
+	return &c
+}
+
+// near visits the slopes that are kept exactly and returns the settled edges
+// at which the rest begins.
+func (w *walker) near(visit func(at coords, n *big.Int)) (edges []edge) {
+	arcs, roots := w.base()
+	for _, a := range arcs {
+		if w.constraints.has(a.v.at) && !w.beyond(a.n) {
+			visit(a.v.at, a.n)
+		}
+	}
+	stack := slices.Clone(roots[:])
+	for len(stack) > 0 && !w.halt.Load() {
+		e := stack[len(stack)-1]
+		stack = stack[:len(stack)-1]
+		if w.constraints.skip(e.a.v.at, e.b.v.at) {
+			continue
+		}
+		if w.settled(e.a.n, e.b.n, e.c.n) {
+			edges = append(edges, e)
+			continue
+		}
+		r := w.scale.front(e)
+		if w.beyond(r.n) {
+			continue
+		}
+		if w.constraints.has(r.v.at) {
+			visit(r.v.at, r.n)
+		}
+		left, right := e.behind(r)
+		stack = append(stack, right, left)
+	}
+	return edges
+}
+
+// behindEntry counts the slopes in front of a settled edge whose numbers are within
+// the bound of s.
+func (w *walker) behindEntry(s *scale, e entry, mu []int8) (int64, error) {
+	if e.u.lo+e.y1.lo > s.most {
+		return 0, nil
+	}
+	sure := primitive(e.u.hi, e.y1.hi, s.sure, mu)
+	if most := primitive(e.u.lo, e.y1.lo, s.most, mu); most == sure {
+		return sure, nil
+	}
+	// Some slope lies so near to the bound that logarithms leave it open.
+	c := w.clone()
+	c.scale = s
+	count := int64(0)
+	c.sink = func(*Visit) bool { count++; return true }
+	c.deep(e.underlying)
+	return count, c.failed()
+}
