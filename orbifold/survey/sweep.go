@@ -84,6 +84,15 @@ func sweepAll[S any](ctx context.Context, w *walker, shards []Shard, q Question[
 	if err := q.check(); err != nil {
 		return Part[S]{}, err
 	}
+	return sweepWith(ctx, w, shards, q, o, func(w *walker, total *S) func() {
+		w.sink = func(v *Visit) bool { q.Visit(total, v); return true }
+		return func() {}
+	})
+}
+
+// sweepWith sweeps shards that begin prepares a walker for; the function that it returns
+// completes the summary when the shard is done.
+func sweepWith[S any](ctx context.Context, w *walker, shards []Shard, q Question[S], o Options, begin func(*walker, *S) func()) (Part[S], error) {
 	o, err := o.normal()
 	if err != nil {
 		return Part[S]{}, err
@@ -126,15 +135,16 @@ func sweepAll[S any](ctx context.Context, w *walker, shards []Shard, q Question[
 	saved := time.Now()
 	failure := pool(ctx, o.Workers, len(todo), func(worker, job int) error {
 		w, s := walkers[worker], todo[job]
-		var total S
-		w.sink = func(v *Visit) bool { q.Visit(&total, v); return true }
+		total := new(S)
+		end := begin(w, total)
 		if !w.run(&s.piece) {
 			return context.Cause(ctx)
 		}
+		end()
 		progress.add(s.piece.load)
 		mu.Lock()
 		defer mu.Unlock()
-		one := Part[S]{whole.header, []sum[S]{{Shard: s.String(), index: s.index, Sum: total}}}
+		one := Part[S]{whole.header, []sum[S]{{Shard: s.String(), index: s.index, Sum: *total}}}
 		more, err := whole.Merge(one)
 		if err != nil {
 			return err
