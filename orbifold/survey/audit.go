@@ -78,12 +78,15 @@ func (b *books) add(x, y uint64) {
 
 // turn books an edge where the walk turned back.
 func (b *books) turn(u, v, o *vertex) {
-	if b.inside && !(b.w.constraints.has(u.at) && b.w.constraints.has(v.at)) {
+	if b.inside && near(u.at, 1) && near(v.at, 1) && !(b.w.constraints.has(u.at) && b.w.constraints.has(v.at)) {
 		return // an edge of the base triangle that the domain cuts
 	}
 	b.turns++
 	b.add(o.r61, mul61(u.r61, v.r61))
 }
+
+// near tells whether both terms of a slope are small.
+func near(c coords, n int64) bool { return c.q() <= n && c.p() <= n && c.p() >= -n }
 
 // visit books a slope.
 func (b *books) visit(v *Visit) {
@@ -92,12 +95,8 @@ func (b *books) visit(v *Visit) {
 		return
 	}
 	x := v.vertex()
-	if b.inside {
-		if p, q := x.at.p(), x.at.q(); max(p, -p, q) <= 2 {
-			if !b.w.constraints.has(v.frame.u.at) || !b.w.constraints.has(v.frame.y[(v.i-1)&3].at) {
-				return
-			}
-		}
+	if b.inside && near(x.at, 2) && !(b.w.constraints.has(v.frame.u.at) && b.w.constraints.has(v.frame.y[(v.i-1)&3].at)) {
+		return
 	}
 	b.strictly++
 	if k := b.w.w61[x.at.class()]; k != 0 {

@@ -75,15 +75,14 @@ type proof struct {
 	state    proofState
 }
 
-// proofState is what a checkpoint holds: keys below Next are done.
+// proofState is what a checkpoint holds: the keys of the buckets below Next are done.
 type proofState struct {
 	Format   string   `json:"format"`
 	Version  int      `json:"version"`
 	Name     string   `json:"name"`
 	Region   Region   `json:"region"`
 	Moduli   []string `json:"moduli"`
-	Next     uint64   `json:"next"` // first key that is not done; 0 at the start
-	Done     bool     `json:"done"`
+	Next     int      `json:"next"`
 	Suspects []uint64 `json:"suspects"` // keys that occur more than once, increasing
 	Account  account  `json:"account"`
 }
@@ -135,7 +134,7 @@ func (d *proof) resume() error {
 		return refuse(err)
 	}
 	want := newProofState(d.state.Region)
-	want.Next, want.Done, want.Suspects, want.Account = old.Next, old.Done, old.Suspects, old.Account
+	want.Next, want.Suspects, want.Account = old.Next, old.Suspects, old.Account
 	a, err := json.Marshal(want)
 	if err != nil {
 		return refuse(err)
@@ -143,7 +142,7 @@ func (d *proof) resume() error {
 	if b, err := json.Marshal(old); err != nil || string(a) != string(b) {
 		return refuse(fmt.Errorf("of another survey, format or version: %w", ErrMismatch))
 	}
-	if !slices.IsSorted(old.Suspects) || old.Account.Den >= mersenne || old.Account.Num >= mersenne {
+	if old.Next < 0 || old.Next > 1<<bucketBits(d.total) || !slices.IsSorted(old.Suspects) || old.Account.Den >= mersenne || old.Account.Num >= mersenne {
 		return refuse(ErrSyntax)
 	}
 	d.state = old
@@ -152,25 +151,24 @@ func (d *proof) resume() error {
 
 // passes makes the passes that are left.
 func (d *proof) passes(ctx context.Context) error {
-	lead, ok := leads(d.total, d.o.Workers, d.o.MemoryBytes)
+	p, ok := newPlan(d.total, d.o.Workers, d.o.MemoryBytes)
 	if !ok {
 		return fmt.Errorf("%v slopes in %d bytes on %d workers: %w", d.count, d.o.MemoryBytes, d.o.Workers, ErrMemory)
 	}
-	for !aligned(d.state.Next, lead) {
-		lead++
+	left, number := p.passes(d.state.Next), 0
+	done := math.Ldexp(float64(d.state.Next), -int(p.bits))
+	all := float64(left) * d.total
+	if done < 1 {
+		all /= 1 - done
 	}
-	total := math.Ldexp(d.total, int(lead)) // visits, all passes
-	done := math.Ldexp(float64(d.state.Next), -64) * total
-	if d.state.Done {
-		done = total
-	}
-	d.progress = newMeter(d.o, "", done, total)
-	if d.state.Done {
+	d.progress = newMeter(d.o, "", all*done, all)
+	if left == 0 {
 		return nil
 	}
-	space := newKeySpace(math.Ldexp(d.total, -int(lead)), lead, d.o.Workers)
-	for !d.state.Done {
-		d.progress.stage(fmt.Sprintf("pass %d of %d", d.state.Next>>1>>(63-lead)+1, uint64(1)<<lead))
+	space := newKeySpace(p, d.o.Workers)
+	for d.state.Next < 1<<p.bits {
+		number++
+		d.progress.stage(fmt.Sprintf("pass %d of %d", number, left))
 		suspects, total, err := d.pass(ctx, space)
 		if err != nil {
 			return err
@@ -184,10 +182,7 @@ func (d *proof) passes(ctx context.Context) error {
 		if len(d.state.Suspects) > d.o.Results {
 			return fmt.Errorf("%d keys occur more than once: want at most %d: %w", len(d.state.Suspects), d.o.Results, ErrTooMany)
 		}
-		if lead > 0 {
-			d.state.Next += 1 << (64 - lead)
-		}
-		d.state.Done = d.state.Next == 0
+		d.state.Next = min(d.state.Next+p.pass, 1<<p.bits)
 		if d.store.name != "" {
 			if err := d.store.write(d.state); err != nil {
 				return err
@@ -201,7 +196,7 @@ func (d *proof) passes(ctx context.Context) error {
 // occur more than once. The first pass keeps the books of the audit too; the others
 // the digest.
 func (d *proof) pass(ctx context.Context, space *keySpace) ([]uint64, account, error) {
-	space.begin(d.state.Next >> 1 >> (63 - space.lead))
+	space.begin(d.state.Next)
 	audit := d.state.Account.Digest.Slopes == 0
 	total, err := d.each(ctx, func(worker int, w *walker) func() account {
 		s := space.workers[worker]

@@ -3,8 +3,8 @@ package survey
 import (
 	"context"
 	"math"
-	"math/bits"
 	"slices"
+	"sort"
 	"sync/atomic"
 )
 
@@ -22,15 +22,67 @@ const (
 
 // Tuning of the buckets, by BenchmarkKeys; tests set other values.
 var (
-	bucketKeys = 1 << 16 // a bucket has about that many keys, so that it stays in a cache
-	maxBuckets = 1 << 13 // more of them, and the stages leave the cache
+	bucketKeys = 1 << 16 // a bucket has at most that many keys on average, so that it stays in a cache
+	maxBuckets = 1 << 14 // of one pass; with more of them the stages leave the cache
 )
 
-// keySpace holds the keys of one pass, whose leading bits agree, in buckets by the
-// bits that follow. Each worker fills chunks of its own.
+// bucketBits is the number of leading bits of a key that tell its bucket, for n keys in
+// all passes. It depends on n alone, so that passes of any size begin at buckets.
+func bucketBits(n float64) uint {
+	b := uint(0)
+	for b < 40 && math.Ldexp(n, -int(b)) > float64(bucketKeys) {
+		b++
+	}
+	return b
+}
+
+// plan is the division of keys into buckets and passes.
+type plan struct {
+	bits   uint    // of the number of a bucket
+	mean   float64 // keys of a bucket on average
+	pass   int     // buckets of one pass
+	chunks int     // chunks of one pass
+}
+
+// newPlan returns the plan for n keys with as few passes as the memory allows; false if
+// it does not hold one bucket.
+func newPlan(n float64, workers int, memory int64) (plan, bool) {
+	p := plan{bits: bucketBits(n)}
+	p.mean = math.Ldexp(n, -int(p.bits))
+	most := min(1<<p.bits, maxBuckets)
+	// The smallest number of passes whose buckets fit.
+	fits := sort.Search(most, func(i int) bool { return p.memory(most-i, workers) <= float64(memory) })
+	if fits == most {
+		return p, false
+	}
+	p.pass = most - fits
+	// Passes of equal size.
+	passes := (1<<p.bits + p.pass - 1) / p.pass
+	p.pass = (1<<p.bits + passes - 1) / passes
+	p.chunks = int(p.need(p.pass, workers))
+	return p, true
+}
+
+// passes is the number of passes from a bucket on.
+func (p plan) passes(from int) int { return (1<<p.bits - from + p.pass - 1) / p.pass }
+
+// memory bounds the bytes that a pass of some buckets takes.
+func (p plan) memory(buckets, workers int) float64 {
+	filters := math.Ldexp(2, int(filterBits(2*p.mean))-3)
+	return p.need(buckets, workers)*(8*chunkKeys+4) + float64(workers)*(float64(buckets)*(8*stageKeys+1+8)+filters)
+}
+
+// need is the number of chunks for some buckets: the number of their keys varies like
+// a binomial one, and each worker leaves a chunk of each bucket partly empty.
+func (p plan) need(buckets, workers int) float64 {
+	n := p.mean * float64(buckets)
+	return math.Ceil((n+12*math.Sqrt(n)+64)/chunkKeys) + float64(buckets*workers)
+}
+
+// keySpace holds the keys of one pass in its buckets. Each worker fills chunks of its own.
 type keySpace struct {
-	lead    uint // bits that all keys of the pass share
-	bits    uint // of the number of the bucket
+	plan
+	first   uint64 // bucket
 	arena   []uint64
 	link    []int32 // by chunk: the chunk of the bucket before it, or −1
 	used    atomic.Int64
@@ -41,59 +93,33 @@ type keySpace struct {
 // stager is the part of a keySpace that one worker fills.
 type stager struct {
 	space *keySpace
-	first uint64 // leading bits of the pass
-	shift uint   // of a key to its leading bits
+	first uint64 // bucket of the pass
+	shift uint   // of a key to its bucket
 	stage []uint64
 	count []uint8
 	at    []int64 // by bucket: where its next key goes; −1 for no chunk
 }
 
-// bucketBits is the number of bits for buckets of a pass of n keys.
-func bucketBits(n float64) uint {
-	b := uint(0)
-	for 1<<b < maxBuckets && n/float64(uint(1)<<b) > float64(bucketKeys) {
-		b++
-	}
-	return b
-}
-
-// passMemory bounds the bytes that a pass of n keys takes.
-func passMemory(n float64, workers int) float64 {
-	buckets := math.Ldexp(1, int(bucketBits(n)))
-	chunks := passChunks(n, workers)
-	seen := 2 * math.Ldexp(1, int(filterBits(n/buckets))-3)
-	return chunks*(8*chunkKeys+4) + float64(workers)*(buckets*(8*stageKeys+1+8)+seen)
-}
-
-// passChunks is the number of chunks for n keys on average: the number of keys
-// whose leading bits agree varies like a binomial one, and each worker
-// leaves a chunk of each bucket partly empty.
-func passChunks(n float64, workers int) float64 {
-	buckets := math.Ldexp(1, int(bucketBits(n)))
-	return math.Ceil((n+12*math.Sqrt(n)+64)/chunkKeys) + buckets*float64(workers)
-}
-
-// newKeySpace takes the memory for a pass of about n keys.
-func newKeySpace(n float64, lead uint, workers int) *keySpace {
-	chunks := int(passChunks(n, workers))
-	s := &keySpace{
-		lead: lead, bits: bucketBits(n),
-		arena: make([]uint64, chunks*chunkKeys), link: make([]int32, chunks),
-	}
-	buckets := 1 << s.bits
+// newKeySpace takes the memory for the passes of a plan.
+func newKeySpace(p plan, workers int) *keySpace {
+	s := &keySpace{plan: p, arena: make([]uint64, p.chunks*chunkKeys), link: make([]int32, p.chunks)}
 	for range workers {
-		w := &stager{space: s, stage: make([]uint64, buckets*stageKeys), count: make([]uint8, buckets), at: make([]int64, buckets)}
+		w := &stager{
+			space: s, shift: 64 - p.bits, // a shift by 64 gives 0
+			stage: make([]uint64, p.pass*stageKeys), count: make([]uint8, p.pass), at: make([]int64, p.pass),
+		}
 		s.workers = append(s.workers, w)
 	}
 	return s
 }
 
-// begin empties the space for the pass of the keys that begin with first.
-func (s *keySpace) begin(first uint64) {
+// begin empties the space for the pass from a bucket on.
+func (s *keySpace) begin(first int) {
+	s.first = uint64(first)
 	s.used.Store(0)
 	s.full.Store(false)
 	for _, w := range s.workers {
-		w.first, w.shift = first, 64-s.lead // a shift by 64 gives 0
+		w.first = s.first
 		clear(w.count)
 		for i := range w.at {
 			w.at[i] = -1
@@ -103,21 +129,21 @@ func (s *keySpace) begin(first uint64) {
 
 // put takes a key, if it belongs to the pass.
 func (w *stager) put(key uint64) {
-	if key>>w.shift != w.first {
+	b := key>>w.shift - w.first
+	if b >= uint64(len(w.count)) {
 		return
 	}
-	b := int(key << w.space.lead >> 1 >> (63 - w.space.bits))
 	c := w.count[b]
-	w.stage[b*stageKeys+int(c)] = key
+	w.stage[b*stageKeys+uint64(c)] = key
 	if c++; c == stageKeys {
-		w.flush(b, stageKeys)
+		w.flush(int(b))
 		c = 0
 	}
 	w.count[b] = c
 }
 
-// flush moves n staged keys of a bucket to its chunk.
-func (w *stager) flush(b, n int) {
+// flush moves the staged keys of a bucket to its chunk.
+func (w *stager) flush(b int) {
 	at := w.at[b]
 	if at < 0 || at%chunkKeys == 0 {
 		chunk := w.space.used.Add(1) - 1
@@ -131,8 +157,8 @@ func (w *stager) flush(b, n int) {
 		}
 		at = chunk * chunkKeys
 	}
-	copy(w.space.arena[at:at+stageKeys], w.stage[b*stageKeys:b*stageKeys+n])
-	w.at[b] = at + int64(n)
+	copy(w.space.arena[at:at+stageKeys], w.stage[b*stageKeys:(b+1)*stageKeys])
+	w.at[b] = at + stageKeys
 }
 
 // each calls f with the keys of a bucket, a chunk at a time.
@@ -182,10 +208,7 @@ func (f *filter) repeated(s *keySpace, b int, list []uint64) []uint64 {
 	once, twice := f.once[:words], f.twice[:words]
 	clear(once)
 	clear(twice)
-	skip, drop := s.lead+s.bits, 64-size
-	if skip > 64-size {
-		skip = 64 - size
-	}
+	skip, drop := s.bits, 64-size
 	s.each(b, func(keys []uint64) {
 		for _, k := range keys {
 			i := k << skip >> drop
@@ -218,7 +241,7 @@ func (f *filter) repeated(s *keySpace, b int, list []uint64) []uint64 {
 
 // repeated returns the keys of the pass that occur more than once, increasing.
 func (s *keySpace) repeated(ctx context.Context) ([]uint64, error) {
-	buckets := 1 << s.bits
+	buckets := min(s.pass, 1<<s.bits-int(s.first))
 	found := make([][]uint64, buckets)
 	filters := make([]filter, len(s.workers))
 	err := pool(ctx, len(s.workers), buckets, func(worker, b int) error {
@@ -226,20 +249,4 @@ func (s *keySpace) repeated(ctx context.Context) ([]uint64, error) {
 		return nil
 	})
 	return slices.Concat(found...), err
-}
-
-// leads returns the number of leading bits by which passes have to be told apart so
-// that one of them fits the memory.
-func leads(n float64, workers int, memory int64) (uint, bool) {
-	for lead := uint(0); lead <= 40; lead++ {
-		if passMemory(math.Ldexp(n, -int(lead)), workers) <= float64(memory) {
-			return lead, true
-		}
-	}
-	return 0, false
-}
-
-// aligned tells whether a pass of the given number of leading bits can begin at a key.
-func aligned(key uint64, lead uint) bool {
-	return lead >= 64 || bits.TrailingZeros64(key) >= int(64-lead)
 }
