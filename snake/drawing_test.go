@@ -5,8 +5,11 @@ import (
 	"errors"
 	"flag"
 	"io"
+	"math"
 	"os"
 	"path/filepath"
+	"regexp"
+	"strconv"
 	"strings"
 	"testing"
 	"unicode"
@@ -252,6 +255,83 @@ func TestHassePictures(t *testing.T) {
 	assert.Contains(t, zero.DOT(), "digraph")
 	assert.Empty(t, zero.Nodes())
 	assert.Empty(t, zero.Arcs())
+}
+
+// attributes reads the numbers of an attribute from every element of a name.
+func attributes(t *testing.T, svg, element, name string) []float64 {
+	d := xml.NewDecoder(strings.NewReader(svg))
+	var all []float64
+	for {
+		token, err := d.Token()
+		if errors.Is(err, io.EOF) {
+			return all
+		}
+		require.NoError(t, err)
+		if e, ok := token.(xml.StartElement); ok && e.Name.Local == element {
+			for _, a := range e.Attr {
+				if a.Name.Local == name {
+					v, err := strconv.ParseFloat(a.Value, 64)
+					require.NoError(t, err)
+					all = append(all, v)
+				}
+			}
+		}
+	}
+}
+
+// The numbers at the lines of a lattice can be read: none lies on another.
+func TestHasseNumbersKeepApart(t *testing.T) {
+	for _, word := range []string{"RLLRRL", "RRRRRR", "RLRLRL", "LLRRLLRR"} {
+		set, err := snake.FromWord(mustWord(word)).Set()
+		require.NoError(t, err)
+		h, err := set.Hasse(100)
+		require.NoError(t, err)
+		svg, err := h.SVG(snake.Drawing{})
+		require.NoError(t, err)
+		x, y := attributes(t, svg, "text", "x"), attributes(t, svg, "text", "y")
+		require.Len(t, x, len(h.Arcs()))
+		for i := range x {
+			for j := range i {
+				assert.Greater(t, math.Hypot(x[i]-x[j], y[i]-y[j]), 10.0, "%s, numbers %d and %d", word, j, i)
+			}
+		}
+	}
+}
+
+// The hatching of a tile is a set of whole slanted lines that reach across it, also where a
+// hexagon has moved its corners.
+func TestHatchingFillsItsTile(t *testing.T) {
+	g := arcGraph(3, 7, [3]int{1, 1, 1})
+	m, err := g.Maximal()
+	require.NoError(t, err)
+	for _, hexagons := range []bool{false, true} {
+		svg, err := g.SVG(snake.Drawing{Matching: &m, Hexagons: hexagons})
+		require.NoError(t, err)
+		width, height := attributes(t, svg, "svg", "width")[0], attributes(t, svg, "svg", "height")[0]
+		paths := regexp.MustCompile(`<path d="([^"]*)"`).FindAllStringSubmatch(svg, -1)
+		require.Len(t, paths, g.Tiles())
+		for _, p := range paths {
+			lines := regexp.MustCompile(`M([\d.]+) ([\d.]+)L([\d.]+) ([\d.]+)`).FindAllStringSubmatch(p[1], -1)
+			require.GreaterOrEqual(t, len(lines), 10)
+			total := 0
+			longest := 0.0
+			for _, l := range lines {
+				total += len(l[0])
+				var v [4]float64
+				for i := range v {
+					v[i], err = strconv.ParseFloat(l[i+1], 64)
+					require.NoError(t, err)
+				}
+				require.InDelta(t, v[2]-v[0], v[1]-v[3], .03, "lines rise at 45°")
+				require.LessOrEqual(t, max(v[0], v[2]), width)
+				require.LessOrEqual(t, max(v[1], v[3]), height)
+				longest = max(longest, math.Hypot(v[2]-v[0], v[3]-v[1]))
+			}
+			require.Len(t, p[1], total, "nothing but whole lines")
+			require.Greater(t, longest, 64.0, "nearly the diagonal of a tile 64 pixels wide")
+			require.Less(t, longest, 130.0)
+		}
+	}
 }
 
 // Every drawn form is pinned by a file: the slope 2/3 with weights (1, 0, 1),

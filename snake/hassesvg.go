@@ -3,6 +3,7 @@ package snake
 import (
 	"cmp"
 	"fmt"
+	"math"
 	"slices"
 )
 
@@ -30,10 +31,7 @@ func (h Hasse) SVG(d Drawing) (string, error) {
 		return "", fmt.Errorf("snake: picture of %d matchings of %s: at most %d tiles, and %d in all, are accepted: %w",
 			len(h.nodes), tileCount(n), MaxDrawnTiles, MaxLatticeTiles, ErrTooLong)
 	}
-	const (
-		unit, pad  = 18.0, 8.0
-		across, up = 22.0, 46.0 // gaps between boxes
-	)
+	const unit, pad, across = 18.0, 8.0, 22.0 // across is the gap between boxes of one level
 	d.Name, d.EdgeNames, d.Numbers = nil, false, false
 	pictures := make([]*picture, len(h.nodes))
 	for k, m := range h.nodes {
@@ -54,6 +52,7 @@ func (h Hasse) SVG(d Drawing) (string, error) {
 	for _, l := range levels {
 		widest = max(widest, len(l))
 	}
+	up := math.Min(46+6*float64(widest-1), 160) // the gap between levels; lines are to be steep
 	width := float64(widest)*(boxWide+across) - across + 2*svgMargin
 	height := float64(len(levels))*(boxHigh+up) - up + 2*svgMargin
 	corner := make([]spot, len(h.nodes)) // upper left corner of the box, in pixels
@@ -69,10 +68,13 @@ func (h Hasse) SVG(d Drawing) (string, error) {
 		x2, y2 := corner[a.Upper].x+boxWide/2, corner[a.Upper].y+boxHigh
 		c.add(`<line x1="%s" y1="%s" x2="%s" y2="%s" stroke="%s" stroke-width="1.4"/>`, decimal(x1), decimal(y1), decimal(x2), decimal(y2), outline)
 	}
-	for _, a := range h.arcs { // a third of the way up, where lines from one node have parted but not yet crossed
+	var placed []spot
+	for _, a := range h.arcs {
 		x1, y1 := corner[a.Lower].x+boxWide/2, corner[a.Lower].y
 		x2, y2 := corner[a.Upper].x+boxWide/2, corner[a.Upper].y+boxHigh
-		at := canvas{unit: 1, left: x1 + (x2-x1)*.36, top: y1 + (y2-y1)*.36}
+		s := clearSpot(spot{x1, y1}, spot{x2, y2}, placed)
+		placed = append(placed, s)
+		at := canvas{unit: 1, left: s.x, top: s.y}
 		at.text(spot{}, 11, heavy, paper, fmt.Sprint(a.Tile))
 		c.WriteString(at.String())
 	}
@@ -83,6 +85,29 @@ func (h Hasse) SVG(d Drawing) (string, error) {
 		c.WriteString(small.String())
 	}
 	return c.document(width, height, fmt.Sprintf("lattice of %d matchings", len(h.nodes))), nil
+}
+
+// clearSpot is a spot for a number on the line from a to b: the first of some that keeps clear
+// of the numbers placed before, else the one that keeps clearest. The first choice is where
+// lines from one node have parted but not yet crossed.
+func clearSpot(a, b spot, placed []spot) spot {
+	const apart = 17 // pixels
+	var best spot
+	most := -1.0
+	for _, part := range []float64{.36, .5, .64, .26, .74, .43, .57} {
+		s := between(a, b, part)
+		room := math.Inf(1)
+		for _, o := range placed {
+			room = min(room, math.Hypot(s.x-o.x, s.y-o.y))
+		}
+		if room >= apart {
+			return s
+		}
+		if room > most {
+			best, most = s, room
+		}
+	}
+	return best
 }
 
 // arranged orders every level so that lines cross little: nodes go to the mean
