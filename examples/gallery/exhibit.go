@@ -17,7 +17,7 @@ import (
 const (
 	maxLattice = 32 // a lattice of matchings is drawn up to this many
 	maxText    = 30 // and a graph with characters up to this many tiles
-	leastTile  = 34 // pixels of a tile's side, at least
+	leastTile  = 40 // pixels of a tile's side, at least
 )
 
 // exhibit is one slope in one family.
@@ -46,19 +46,34 @@ func newExhibit(f orbifold.Family, s farey.Slope, seed uint64) (*exhibit, error)
 	for range x.graph.Hexagons() {
 		x.hexagons++
 	}
-	random, err := x.set.Sample(rand.NewPCG(seed, uint64(x.graph.Tiles())))
+	random, err := x.random(rand.NewPCG(seed, uint64(x.graph.Tiles())))
 	if err != nil {
 		return nil, err
 	}
 	for _, add := range []func() error{
 		x.addCounts, x.addExpansion,
-		x.addMinimal, func() error { return x.addRandom(random) }, x.addLattice,
+		x.addMinimal, func() error { return x.addRandom(random) }, x.addBand, x.addLattice,
 	} {
 		if err := add(); err != nil {
 			return nil, err
 		}
 	}
 	return x, nil
+}
+
+// random draws a matching other than the minimal and the maximal one, each with the same
+// probability; where there are no others, the maximal one.
+func (x *exhibit) random(source rand.Source) (snake.Matching, error) {
+	n := x.graph.Tiles()
+	if x.graph.Count().Cmp(big.NewInt(2)) <= 0 {
+		return x.set.Maximal()
+	}
+	for {
+		m, err := x.set.Sample(source)
+		if err != nil || m.Height() > 0 && m.Height() < n {
+			return m, err
+		}
+	}
 }
 
 // state appends a fact.
@@ -108,10 +123,13 @@ func (x *exhibit) addExpansion() error {
 	if err != nil {
 		return err
 	}
-	x.Facts = append(x.Facts, fact{"Laurent expansion", fmt.Sprintf("%v", e), e.String()})
-	d := e.Denominator()
-	x.state("Denominator vector", "(%d, %d, %d)", d[0], d[1], d[2])
-	x.state("Newton polygon", "%v", e.Newton())
+	x.Facts = append(x.Facts, fact{Name: "Laurent expansion", Value: fmt.Sprintf("%v", e), Whole: e.String()})
+	x.state("Denominator vector", "%s", vector(e.Denominator()))
+	var corners []string
+	for _, v := range e.Newton() {
+		corners = append(corners, vector(v))
+	}
+	x.state("Newton polygon", "%s", strings.Join(corners, ", "))
 	if x.Family != (orbifold.Family{}) {
 		return nil
 	}
@@ -119,13 +137,21 @@ func (x *exhibit) addExpansion() error {
 	if err != nil {
 		return err
 	}
-	x.Facts = append(x.Facts, fact{"F-polynomial", fmt.Sprintf("%v", p), p.String()})
+	x.Facts = append(x.Facts, fact{
+		Name: "F-polynomial", Note: "x1, x2, x3 stand for y₀, y∞, y₁",
+		Value: fmt.Sprintf("%v", p), Whole: p.String(),
+	})
 	g, err := orbifold.GVector(x.Slope)
 	if err != nil {
 		return err
 	}
-	x.state("g-vector", "(%d, %d, %d)", g[0], g[1], g[2])
+	x.state("g-vector", "%s", vector(g))
 	return nil
+}
+
+// vector writes exponents of x₀, x∞, x₁.
+func vector(v [3]int) string {
+	return strings.ReplaceAll(fmt.Sprintf("(%d, %d, %d)", v[0], v[1], v[2]), "-", "−")
 }
 
 // addMinimal shows the graph with the labels of tiles and edges and its minimal matching.
@@ -169,6 +195,39 @@ func (x *exhibit) addRandom(m snake.Matching) error {
 	return x.hang(p, x.graph, snake.Drawing{Matching: &m, Name: labelSign, Hexagons: true})
 }
 
+// addBand states and shows the closed curve round the arc.
+func (x *exhibit) addBand() error {
+	b, err := x.Family.Band(x.Slope)
+	if err != nil {
+		return err
+	}
+	trace, err := x.Family.Trace(x.Slope)
+	if err != nil {
+		return err
+	}
+	x.Facts = append(x.Facts, fact{
+		Name: "Closed curve", Value: fmt.Sprintf("%v", b.Word()),
+		Note: fmt.Sprintf("cyclic word of its band, with %s; good matchings %s, trace K·N − k = %s",
+			plural(b.Tiles(), "tile", "tiles"), digits(b.Count()), digits(trace)),
+	})
+	if b.Tiles() > maxTiles {
+		return nil
+	}
+	set, err := b.Set()
+	if err != nil {
+		return err
+	}
+	m, err := set.Minimal()
+	if err != nil {
+		return err
+	}
+	p := picture{
+		Title: "The band of the closed curve", Stem: "band",
+		Caption: "The band of the closed curve round the arc, cut open: the two edges with arrows are one; thick, its minimal good matching",
+	}
+	return x.hang(p, b, snake.Drawing{Matching: &m, Numbers: true})
+}
+
 // addLattice shows all matchings in their order, when they are few.
 func (x *exhibit) addLattice() error {
 	h, err := x.set.Hasse(maxLattice)
@@ -188,7 +247,7 @@ func (x *exhibit) addLattice() error {
 	x.Pictures = append(x.Pictures, picture{
 		Title: "The lattice of matchings", Stem: "lattice",
 		Caption: "From the minimal matching, below, to the maximal one, above; a line is the flip of the tile with the number beside it",
-		SVG:     template.HTML(svg), DOT: h.DOT(),
+		SVG:     template.HTML(svg), DOT: h.DOT(), Wide: true,
 	})
 	return nil
 }

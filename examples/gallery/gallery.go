@@ -27,14 +27,16 @@ type wall struct {
 	Exhibits []*exhibit
 }
 
-// fact is a name with a value; Whole is the value in full where Value is shortened.
-type fact struct{ Name, Value, Whole string }
+// fact is a name with a value and perhaps a remark on it; Whole is the value in full where
+// Value is shortened.
+type fact struct{ Name, Value, Whole, Note string }
 
 // picture is a drawing in its several forms; a form that there is not is empty.
 type picture struct {
 	Title, Caption string
 	SVG            template.HTML
 	Least          int    // pixels of width below which it is scrolled, not shrunk
+	Wide           bool   // it may take the whole width of the page
 	Text           string // the same with characters
 	TikZ, DOT      string // the same as code
 	Stem           string // first part of the names of its files

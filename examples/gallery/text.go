@@ -47,6 +47,9 @@ func (g *gallery) text() string {
 				value = f.Whole
 			}
 			fmt.Fprintf(&b, "%-20s %s\n", f.Name, value)
+			if f.Note != "" {
+				fmt.Fprintf(&b, "%-20s (%s)\n", "", f.Note)
+			}
 		}
 		for _, p := range x.Pictures {
 			if p.Text != "" {
