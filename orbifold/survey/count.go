@@ -3,6 +3,7 @@ package survey
 import (
 	"context"
 	"fmt"
+	"math"
 	"math/big"
 	"slices"
 	"sort"
@@ -42,6 +43,16 @@ type Row struct {
 	// X is about ln(K·Bound), the length up to which Bound reaches: All grows
 	// like G·X² with the constant of Growth.
 	X float64
+}
+
+// Ratio returns All/(G·X²), which tends to 1 as the bound grows.
+func (r Row) Ratio(g *big.Float) float64 {
+	if g == nil || r.All == nil || r.X == 0 {
+		return 0
+	}
+	constant, _ := g.Float64()
+	all, _ := new(big.Float).SetInt(r.All).Float64()
+	return all / (constant * r.X * r.X)
 }
 
 // Table returns the counts of Count at many bounds, at most MaxBounds, in one walk
@@ -112,23 +123,23 @@ func Table(ctx context.Context, f orbifold.Family, bounds []*big.Int, o Options)
 		reach = max(reach, w.most/(entries[i].u.lo+entries[i].y1.lo))
 	}
 	mu := moebius(reach)
-	far := make([][]int64, len(entries)) // by entry and column
+	far := make([][]int64, o.Workers) // by worker and column; sums of integers in any order
 	walkers := make([]*walker, o.Workers)
 	err = pool(ctx, o.Workers, len(entries), func(worker, job int) error {
 		if walkers[worker] == nil {
 			walkers[worker] = w.clone()
+			far[worker] = make([]int64, len(columns))
 		}
-		counts := make([]int64, len(columns))
 		for i := range columns {
-			var err error
-			if counts[i], err = walkers[worker].behindEntry(columns[i].scale, entries[job], mu); err != nil {
+			n, err := walkers[worker].behindEntry(columns[i].scale, entries[job], mu)
+			if err != nil {
 				return err
 			}
 			if w.halt.Load() {
 				return context.Cause(ctx)
 			}
+			far[worker][i] += n
 		}
-		far[job] = counts
 		return nil
 	})
 	if err != nil {
@@ -140,16 +151,16 @@ func Table(ctx context.Context, f orbifold.Family, bounds []*big.Int, o Options)
 		near, orbits = near+columns[i].near, orbits+columns[i].orbits
 		sum := new(big.Int)
 		for _, counts := range far {
-			sum.Add(sum, big.NewInt(counts[i]))
+			if counts != nil {
+				sum.Add(sum, big.NewInt(counts[i]))
+			}
 		}
 		all := new(big.Int).Mul(sum, big.NewInt(int64(group)))
-		lo, _ := columns[i].scale.nats(columns[i].scale.sure, columns[i].scale.sure)
-		k, _ := columns[i].scale.nats(2*w.kLo, 2*w.kLo) // ln K
 		rows[j] = Row{
 			Bound:  new(big.Int).Set(bounds[j]),
 			Slopes: sum.Add(sum, big.NewInt(near)),
 			All:    all.Add(all, big.NewInt(orbits)),
-			X:      lo + k,
+			X:      math.Ldexp(float64(columns[i].scale.sure), -int(w.shift)),
 		}
 	}
 	return rows, nil
