@@ -183,9 +183,10 @@ func (p Laurent) scale(t laurentTerm) Laurent {
 // takes.
 const MaxValueBits = 1 << 30
 
-// Eval returns the value with x1, x2, … replaced by nonzero rational numbers.
-// It returns [ErrIndex] when a value is missing, nil, or 0, and [ErrTooLarge]
-// when a power of one of them would have more than [MaxValueBits] bits.
+// Eval returns the value with x1, x2, … replaced by rational numbers. It returns
+// [ErrIndex] when a value of a variable that occurs is missing or nil, or 0 with a
+// negative exponent, and [ErrTooLarge] when a power of one of them would have more
+// than [MaxValueBits] bits.
 func (p Laurent) Eval(values ...*big.Rat) (*big.Rat, error) {
 	total := new(big.Rat)
 	for _, t := range p.terms {
@@ -194,8 +195,12 @@ func (p Laurent) Eval(values ...*big.Rat) (*big.Rat, error) {
 			if e == 0 {
 				continue
 			}
-			if i >= len(values) || values[i] == nil || values[i].Sign() == 0 {
-				return nil, fmt.Errorf("snake: value of a Laurent polynomial: x%d needs a nonzero value: %w", i+1, ErrIndex)
+			if i >= len(values) || values[i] == nil || values[i].Sign() == 0 && e < 0 {
+				return nil, fmt.Errorf("snake: value of a Laurent polynomial: x%d^%d needs a value, and with a negative exponent one that is not 0: %w", i+1, e, ErrIndex)
+			}
+			if values[i].Sign() == 0 {
+				v = new(big.Rat) // of whatever exponent; the other values are still looked at
+				continue
 			}
 			size := max(values[i].Num().BitLen(), values[i].Denom().BitLen())
 			if limit := MaxValueBits / size; e > limit || e < -limit {

@@ -194,6 +194,29 @@ func TestLaurentEvaluationIsMultiplicative(t *testing.T) {
 	})
 }
 
+// At x1 = 0 a sum without negative exponents of x1 has the value of the monomials
+// that x1 does not occur in.
+func TestLaurentValueAtZeroDropsTheVariable(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		var p, rest snake.Laurent
+		for range rapid.IntRange(0, 8).Draw(t, "monomials") {
+			e := []int{rapid.IntRange(0, 2).Draw(t, "e1"), rapid.IntRange(-3, 3).Draw(t, "e2")}
+			m, err := snake.NewLaurent(big.NewInt(rapid.Int64Range(-9, 9).Draw(t, "c")), e...)
+			require.NoError(t, err)
+			p = p.Add(m)
+			if e[0] == 0 {
+				rest = rest.Add(m)
+			}
+		}
+		x := big.NewRat(rapid.Int64Range(1, 9).Draw(t, "x2"), 7)
+		got, err := p.Eval(new(big.Rat), x)
+		require.NoError(t, err)
+		want, err := rest.Eval(nil, x)
+		require.NoError(t, err)
+		require.Equal(t, want.String(), got.String())
+	})
+}
+
 // The terms are the coefficients, in falling order, none of them 0.
 func TestLaurentTerms(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
@@ -252,12 +275,19 @@ func TestLaurentRefuses(t *testing.T) {
 
 	p, err := snake.NewLaurent(big.NewInt(1), 0, math.MaxInt)
 	require.NoError(t, err)
-	for _, values := range [][]*big.Rat{{big.NewRat(1, 1)}, {nil, nil}, {nil, new(big.Rat)}} {
+	for _, values := range [][]*big.Rat{{big.NewRat(1, 1)}, {nil, nil}} {
 		_, err = p.Eval(values...)
 		assert.ErrorIs(t, err, snake.ErrIndex)
 	}
 	_, err = p.Eval(nil, big.NewRat(3, 2))
 	assert.ErrorIs(t, err, snake.ErrTooLarge)
+	v, err := p.Eval(nil, new(big.Rat)) // 0 to any positive power is 0
+	require.NoError(t, err)
+	assert.Zero(t, v.Sign())
+	inverse, err := snake.NewLaurent(big.NewInt(1), -1)
+	require.NoError(t, err)
+	_, err = inverse.Eval(new(big.Rat))
+	assert.ErrorIs(t, err, snake.ErrIndex)
 	least, err := snake.NewLaurent(big.NewInt(1), math.MinInt)
 	require.NoError(t, err)
 	_, err = least.Eval(big.NewRat(3, 2))
