@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math/big"
 	"math/rand/v2"
+	"strings"
 
 	"example.com/onecusp/contfrac"
 	"example.com/onecusp/snake"
@@ -249,4 +250,87 @@ func ExampleGraph_AdjacencyText() {
 	// 3: 1 2 5
 	// 4: 1 5
 	// 5: 3 4
+}
+
+// The matchings that use the edge on the right of tile 2, counted and listed.
+func ExampleSet_WithEdge() {
+	w, _ := contfrac.ParseWord("RLL")
+	g := snake.FromWord(w)
+	edge, _ := g.Side(2, snake.East)
+	all, _ := g.Set()
+	with, _ := all.WithEdge(edge, true)
+	fmt.Println(edge, "is used by", with.Count(), "of", all.Count())
+	for m := range with.All() {
+		edges, _ := g.EdgesOf(m)
+		fmt.Println(m, edges)
+	}
+	// Output:
+	// 2 east is used by 2 of 7
+	// 0011 [1 south 1 north 2 east 3 east 4 north]
+	// 1011 [1 west 1 east 2 east 3 east 4 north]
+}
+
+// Minimal and maximal matching: the two that lie on the boundary.
+func ExampleGraph_Minimal() {
+	w, _ := contfrac.ParseWord("RL")
+	g := snake.FromWord(w)
+	minimal, _ := g.Minimal()
+	maximal, _ := g.Maximal()
+	low, _ := g.Text(snake.Drawing{Matching: &minimal})
+	high, _ := g.Text(snake.Drawing{Matching: &maximal})
+	fmt.Printf("%v\n%s%v\n%s", minimal, low, maximal, high)
+	// Output:
+	// 000
+	// ●━━━●───●━━━●
+	// │   │   │   │
+	// ●━━━●───●━━━●
+	// 111
+	// ●───●━━━●───●
+	// ┃░ ░│░ ░│░ ░┃
+	// ●───●━━━●───●
+}
+
+// Weights on flipped tiles: a variable for each tile gives a monomial for each matching.
+func ExampleWeights() {
+	w, _ := contfrac.ParseWord("RL")
+	sum, _ := snake.Weigh(snake.Laurents{}, snake.FromWord(w), snake.Weights[snake.Laurent]{
+		Tile: func(tile int) snake.Laurent {
+			y, _ := snake.Variable(tile)
+			return y
+		},
+	})
+	fmt.Println(sum)
+	// Output: x1*x2*x3 + x1*x3 + x1 + x3 + 1
+}
+
+// A picture of a crossing of weight 1 as a hexagon, with its minimal matching and signs
+// of the caller's own. What comes back is the text of a file that a browser shows.
+func ExampleGraph_SVG() {
+	g := snake.NewBuilder(2, 3, 1).GlueOwn(contfrac.L).Graph(1, 3)
+	minimal, _ := g.Minimal()
+	picture, _ := g.SVG(snake.Drawing{
+		Matching: &minimal,
+		Name:     func(l snake.Label) string { return [...]string{"", "0", "∞", "1"}[l] },
+		Hexagons: true,
+	})
+	fmt.Println(strings.Split(picture, "\n")[1])
+	// Output:
+	// <title>snake graph, 2 tiles: L</title>
+}
+
+// Code for LaTeX; the matched edges are the thick ones.
+func ExampleGraph_TikZ() {
+	minimal, _ := snake.Edge().Minimal()
+	code, _ := snake.Edge().TikZ(snake.Drawing{Matching: &minimal})
+	for line := range strings.Lines(code) {
+		if !strings.Contains(line, "definecolor") {
+			fmt.Print(line)
+		}
+	}
+	// Output:
+	// \begin{tikzpicture}[x=1.4cm, y=1.4cm, line join=round]
+	//   \draw[line width=2.4pt, line cap=round] (0,0) -- (0,1);
+	//   \fill (0,0) circle (.04);
+	//   \fill (0,1) circle (.04);
+	// \end{tikzpicture}
 }
