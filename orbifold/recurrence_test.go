@@ -1,0 +1,307 @@
+package orbifold_test
+
+import (
+	"fmt"
+	"math/big"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+	"pgregory.net/rapid"
+
+	"example.com/onecusp/farey"
+	"example.com/onecusp/orbifold"
+)
+
+// rats draws rational numbers: zero, units, small, large.
+func rats() *rapid.Generator[*big.Rat] {
+	return rapid.Custom(func(t *rapid.T) *big.Rat {
+		num := rapid.OneOf(rapid.Int64Range(-2, 2), rapid.Int64Range(-20, 20), rapid.Int64()).Draw(t, "numerator")
+		den := rapid.OneOf(rapid.Just(int64(1)), rapid.Int64Range(1, 9), rapid.Int64Range(1, 1<<62)).Draw(t, "denominator")
+		return big.NewRat(num, den)
+	})
+}
+
+func polynomials(degree int) *rapid.Generator[orbifold.Polynomial] {
+	return rapid.Custom(func(t *rapid.T) orbifold.Polynomial {
+		return orbifold.NewPolynomial(rapid.SliceOfN(rats(), 0, degree+1).Draw(t, "coefficients")...)
+	})
+}
+
+func TestEvaluationIsMultiplicative(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		p, q := polynomials(5).Draw(t, "p"), polynomials(5).Draw(t, "q")
+		x := rats().Draw(t, "x")
+		product := p.Mul(q)
+		assert.Zero(t, product.Eval(x).Cmp(new(big.Rat).Mul(p.Eval(x), q.Eval(x))))
+		if p.Degree() >= 0 && q.Degree() >= 0 {
+			assert.Equal(t, p.Degree()+q.Degree(), product.Degree())
+		} else {
+			assert.Equal(t, -1, product.Degree())
+		}
+		assert.True(t, product.Equal(q.Mul(p)))
+	})
+}
+
+// TestFactorsMultiplyBack: the factors, with their multiplicities, make the
+// polynomial up to its leading coefficient.
+func TestFactorsMultiplyBack(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		p := orbifold.PolynomialOf(1)
+		for _, q := range rapid.SliceOfN(polynomials(2), 1, 3).Draw(t, "parts") {
+			if q.Degree() >= 0 {
+				p = p.Mul(q)
+			}
+			if q.Degree() >= 0 && rapid.Bool().Draw(t, "twice") {
+				p = p.Mul(q)
+			}
+		}
+		for range rapid.IntRange(0, 2).Draw(t, "ones") {
+			p = p.Mul(orbifold.PolynomialOf(-1, 1))
+		}
+		product := orbifold.PolynomialOf(1)
+		for _, f := range p.Factors() {
+			assert.Positive(t, f.Polynomial.Degree())
+			assert.Equal(t, "1/1", f.Polynomial.Coefficient(f.Polynomial.Degree()).String(), "monic")
+			for range f.Multiplicity {
+				product = product.Mul(f.Polynomial)
+			}
+		}
+		lead := orbifold.NewPolynomial(p.Coefficient(p.Degree()))
+		assert.True(t, p.Equal(product.Mul(lead)), "%v from %v", p, p.Factors())
+	})
+}
+
+func TestFactorsOfKnownPolynomials(t *testing.T) {
+	for _, x := range []struct {
+		p    orbifold.Polynomial
+		want string
+	}{
+		{orbifold.Polynomial{}, "[]"},
+		{orbifold.PolynomialOf(7), "[]"},
+		{orbifold.PolynomialOf(0, 0, 2), "[{x 2 true}]"},
+		{orbifold.PolynomialOf(-1, 0, 1), "[{x − 1 1 true} {x + 1 1 true}]"},
+		{orbifold.PolynomialOf(1, -3, 1), "[{x² − 3x + 1 1 true}]"},
+		{orbifold.PolynomialOf(6, -5, 1), "[{x − 3 1 true} {x − 2 1 true}]"},
+		{orbifold.PolynomialOf(1, 0, 2, 0, 1), "[{x² + 1 2 true}]"},
+		{orbifold.PolynomialOf(-2, 0, 0, 1), "[{x³ − 2 1 false}]"},
+		{orbifold.PolynomialOf(-1, 4), "[{x − 1/4 1 true}]"},
+	} {
+		assert.Equal(t, x.want, fmt.Sprint(x.p.Factors()), "%v", x.p)
+	}
+}
+
+func TestPolynomialTexts(t *testing.T) {
+	p := orbifold.NewPolynomial(big.NewRat(-1, 2), nil, big.NewRat(3, 4), big.NewRat(-1, 1), big.NewRat(1, 1))
+	assert.Equal(t, "x⁴ − x³ + 3/4·x² − 1/2", p.String())
+	assert.Equal(t, "z⁴ − z³ + 3/4·z² − 1/2", p.Text("z"))
+	assert.Equal(t, "0", orbifold.Polynomial{}.String())
+	assert.Equal(t, "−x", orbifold.PolynomialOf(0, -1, 0).String())
+	assert.False(t, p.IsIntegral())
+	assert.True(t, orbifold.PolynomialOf(1, 2).IsIntegral())
+	assert.Equal(t, "-1/2", p.Eval(nil).RatString())
+	assert.Equal(t, "0", p.Coefficient(-1).RatString())
+	assert.Equal(t, "0", p.Coefficient(5).RatString())
+	huge := orbifold.NewPolynomial(new(big.Rat).SetInt(new(big.Int).Exp(big.NewInt(10), big.NewInt(60), nil)))
+	assert.Contains(t, fmt.Sprintf("%v", huge), "digits")
+	assert.Len(t, fmt.Sprintf("%s", huge), 61)
+	assert.False(t, p.Equal(huge))
+	assert.False(t, p.Equal(orbifold.PolynomialOf(0, 0, 0, 0, 2)))
+}
+
+// TestRecurrenceTermsCheck: the terms that a recurrence gives are accepted, and no
+// longer when one is changed.
+func TestRecurrenceTermsCheck(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		d := rapid.IntRange(1, 4).Draw(t, "order")
+		coefficients := rapid.SliceOfN(rapid.Int64Range(-5, 5), d, d).Draw(t, "coefficients")
+		p := orbifold.PolynomialOf(append(coefficients, 1)...)
+		initial := make([]*big.Int, d)
+		for i := range initial {
+			initial[i] = big.NewInt(rapid.Int64().Draw(t, "term"))
+		}
+		r := must(orbifold.NewRecurrence(p, initial...))(t)
+		var terms []*big.Int
+		for a := range r.Terms() {
+			terms = append(terms, new(big.Int).Set(a.Num()))
+			if len(terms) == 15 {
+				break
+			}
+		}
+		require.NoError(t, r.Check(terms))
+		i := rapid.IntRange(0, 14).Draw(t, "changed")
+		terms[i].Add(terms[i], big.NewInt(1))
+		assert.ErrorIs(t, r.Check(terms), orbifold.ErrNotRecurrent)
+		// The generating function: numerator = denominator times the series.
+		g := r.GeneratingFunction()
+		terms[i].Sub(terms[i], big.NewInt(1))
+		series := make([]*big.Rat, len(terms))
+		for j, a := range terms {
+			series[j] = new(big.Rat).SetInt(a)
+		}
+		product := g.Denominator().Mul(orbifold.NewPolynomial(series...))
+		for j := range 15 {
+			assert.Zero(t, g.Numerator().Coefficient(j).Cmp(product.Coefficient(j)), "coefficient %d of %v", j, g)
+		}
+		assert.Equal(t, "1", g.Denominator().Coefficient(0).RatString())
+	})
+}
+
+func TestRecurrenceTexts(t *testing.T) {
+	r := must(orbifold.NewRecurrence(orbifold.PolynomialOf(-1, 6, -6, 1), big.NewInt(1), big.NewInt(1), big.NewInt(3)))(t)
+	assert.Equal(t, "a(n) = 6·a(n−1) − 6·a(n−2) + a(n−3)", r.String())
+	assert.Equal(t, r.String(), fmt.Sprintf("%v", r))
+	assert.Equal(t, r.String(), fmt.Sprintf("%s", r))
+	g := r.GeneratingFunction()
+	assert.Equal(t, "(1 − 5x + 3x²)/(1 − 6x + 6x² − x³)", g.String())
+	assert.Equal(t, g.String(), fmt.Sprintf("%s", g))
+	assert.Equal(t, g.String(), fmt.Sprintf("%v", g))
+	half := must(orbifold.NewRecurrence(orbifold.PolynomialOf(-1, 2), big.NewInt(8)))(t)
+	assert.Equal(t, "a(n) = 1/2·a(n−1)", half.String())
+	assert.NoError(t, half.Check([]*big.Int{big.NewInt(8), big.NewInt(4), big.NewInt(2)}))
+	assert.Error(t, half.Check([]*big.Int{big.NewInt(8), big.NewInt(4), big.NewInt(3)}))
+	// A recurrence that is not minimal has its generating function in lowest terms.
+	long := must(orbifold.NewRecurrence(orbifold.PolynomialOf(1, -3, 1).Mul(orbifold.PolynomialOf(-2, 1)), big.NewInt(1), big.NewInt(1), big.NewInt(2)))(t)
+	var zero orbifold.Fan
+	assert.True(t, must(zero.Recurrence(1))(t).GeneratingFunction().Equal(long.GeneratingFunction()))
+}
+
+func TestZeroRecurrence(t *testing.T) {
+	var r orbifold.Recurrence
+	assert.Equal(t, "a(n) = 0", r.String())
+	assert.Equal(t, 0, r.Order())
+	assert.Equal(t, "1", r.Characteristic().String())
+	assert.Equal(t, "0", r.GeneratingFunction().String())
+	assert.NoError(t, r.Check([]*big.Int{new(big.Int), new(big.Int)}))
+	assert.ErrorIs(t, r.Check([]*big.Int{new(big.Int), big.NewInt(1)}), orbifold.ErrNotRecurrent)
+	assert.ErrorIs(t, r.Check([]*big.Int{nil}), orbifold.ErrNotRecurrent)
+	n := 0
+	for a := range r.Terms() {
+		assert.Zero(t, a.Sign())
+		if n++; n == 5 {
+			break
+		}
+	}
+	var g orbifold.RationalFunction
+	assert.Equal(t, "0", g.String())
+	assert.True(t, g.Equal(r.GeneratingFunction()))
+}
+
+func TestNewRecurrenceErrors(t *testing.T) {
+	_, err := orbifold.NewRecurrence(orbifold.Polynomial{})
+	assert.ErrorIs(t, err, orbifold.ErrRecurrence)
+	_, err = orbifold.NewRecurrence(orbifold.PolynomialOf(1, 1))
+	assert.ErrorIs(t, err, orbifold.ErrRecurrence)
+	_, err = orbifold.NewRecurrence(orbifold.PolynomialOf(1, 1), nil)
+	assert.ErrorIs(t, err, orbifold.ErrRecurrence)
+}
+
+// TestEnclosuresOfSurdsHold: the ends are on both sides of the value, decided by
+// squares, and close.
+func TestEnclosuresOfSurdsHold(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		form := must(fans().Draw(t, "fan").ClosedForm())(t)
+		s := rapid.SampledFrom([]orbifold.Surd{form.Unit(), form.Unit().Conjugate(), form.Alpha(), form.Alpha().Conjugate()}).Draw(t, "surd")
+		prec := rapid.SampledFrom([]uint{1, 2, 24, 53, 64, 200}).Draw(t, "precision")
+		lo, hi, err := s.Enclosure(prec)
+		require.NoError(t, err)
+		assert.Equal(t, prec, lo.Prec())
+		assert.LessOrEqual(t, compareSurd(lo, s), 0, "lower end of %v", s)
+		assert.GreaterOrEqual(t, compareSurd(hi, s), 0, "upper end of %v", s)
+		width := new(big.Float).SetPrec(64).Sub(hi, lo)
+		least := new(big.Float).Abs(lo)
+		if other := new(big.Float).Abs(hi); other.Cmp(least) < 0 {
+			least = other
+		}
+		assert.LessOrEqual(t, width.Cmp(new(big.Float).SetMantExp(least, 2-int(prec))), 0)
+	})
+}
+
+// compareSurd compares x with a + b·√d exactly.
+func compareSurd(x *big.Float, s orbifold.Surd) int {
+	a, b, d := s.Parts()
+	r, _ := x.Rat(nil)
+	r.Sub(r, a) // against b·√d
+	if r.Sign() != b.Sign() {
+		return r.Sign() - b.Sign()
+	}
+	left := new(big.Rat).Mul(r, r)
+	right := new(big.Rat).Mul(b, b)
+	return left.Cmp(right.Mul(right, new(big.Rat).SetInt(d))) * r.Sign()
+}
+
+func TestSurdEdges(t *testing.T) {
+	var zero orbifold.Surd
+	assert.Equal(t, "0", zero.String())
+	lo, hi, err := zero.Enclosure(10)
+	require.NoError(t, err)
+	assert.Zero(t, lo.Sign()+hi.Sign())
+	for _, prec := range []uint{0, orbifold.MaxLogPrecision + 1} {
+		_, _, err = zero.Enclosure(prec)
+		assert.ErrorIs(t, err, orbifold.ErrPrecision)
+	}
+	lambda := must(fanAt(t, orbifold.Family{}, farey.MustParse("1/100"), 0).Ratio())(t)
+	assert.Contains(t, fmt.Sprintf("%v", lambda), "digits")
+	assert.Equal(t, lambda.String(), fmt.Sprintf("%s", lambda))
+}
+
+// TestFanTypesShareNothing spoils what the types round fans hand out and what
+// they were made of.
+func TestFanTypesShareNothing(t *testing.T) {
+	f := fanAt(t, orbifold.MustNew(2, 0, 1), farey.MustParse("2/5"), 3)
+	r := must(f.Recurrence(1))(t)
+	form := must(f.ClosedForm())(t)
+	g := r.GeneratingFunction()
+	lambda := must(f.Ratio())(t)
+	show := func() string {
+		return fmt.Sprint(f, r, form, g, lambda, form.Alpha(), form.Unit(), r.Initial(), f.Waist(), must(f.Term(big.NewInt(3)))(t))
+	}
+	want := show()
+	bad := big.NewRat(-99, 7)
+	for _, p := range []orbifold.Polynomial{r.Characteristic(), g.Numerator(), g.Denominator()} {
+		p.Coefficient(0).Set(bad)
+		p.Eval(bad).Set(bad)
+		for _, c := range p.Coefficients() {
+			c.Set(bad)
+		}
+	}
+	for _, s := range []orbifold.Surd{lambda, lambda.Conjugate(), form.Alpha(), form.Unit()} {
+		a, b, d := s.Parts()
+		a.Set(bad)
+		b.Set(bad)
+		d.SetInt64(-99)
+	}
+	e, o := form.Resting()
+	e.Set(bad)
+	o.Set(bad)
+	for _, a := range r.Initial() {
+		a.SetInt64(-99)
+	}
+	for a := range r.Terms() {
+		a.Set(bad)
+		break
+	}
+	n := big.NewInt(3)
+	for _, x := range []*big.Int{f.Waist(), must(f.Term(n))(t), must(f.Trace())(t), must(form.Term(3))(t), must(f.TermMod(n, big.NewInt(7)))(t)} {
+		x.SetInt64(-99)
+	}
+	i, _ := f.Index(f.Slope(n))
+	i.SetInt64(-99)
+	assert.Equal(t, "3", n.String(), "an argument was changed")
+	assert.Equal(t, want, show())
+
+	c := big.NewRat(5, 3)
+	p := orbifold.NewPolynomial(c, big.NewRat(1, 1))
+	first := big.NewInt(4)
+	q := must(orbifold.NewRecurrence(p, first))(t)
+	text := fmt.Sprint(p, q, q.Initial())
+	c.Set(bad)
+	first.SetInt64(-99)
+	assert.Equal(t, text, fmt.Sprint(p, q, q.Initial()))
+	x := big.NewInt(12)
+	u, v, err := orbifold.Lucas(1, x)
+	require.NoError(t, err)
+	u.SetInt64(-99)
+	v.SetInt64(-99)
+	assert.Equal(t, "12", x.String())
+}
