@@ -79,7 +79,7 @@ func (p *picture) tikz() string {
 	}
 	p.texts(func(s spot, l Label, text string, edge bool) {
 		if edge {
-			line(`\node[ink%d, fill=white, inner sep=.6pt, font=\tiny] at %s {%s};`, shade(l), at(s), text)
+			line(`\node[ink%d, fill=white, inner sep=.6pt, font=\scriptsize] at %s {%s};`, shade(l), at(s), text)
 		} else {
 			line(`\node[fill=tint%d, fill opacity=.75, text opacity=1, inner sep=1pt] at %s {%s};`, shade(l), at(s), text)
 		}
