@@ -134,17 +134,14 @@ func (x *exhibit) addExpansion() error {
 		return nil
 	}
 	p, err := orbifold.FPolynomial(x.Slope)
-	if err != nil {
+	g, errG := orbifold.GVector(x.Slope)
+	if err := errors.Join(err, errG); err != nil {
 		return err
 	}
 	x.Facts = append(x.Facts, fact{
 		Name: "F-polynomial", Note: "x1, x2, x3 stand for y₀, y∞, y₁",
 		Value: fmt.Sprintf("%v", p), Whole: p.String(),
 	})
-	g, err := orbifold.GVector(x.Slope)
-	if err != nil {
-		return err
-	}
 	x.state("g-vector", "%s", vector(g))
 	return nil
 }
@@ -198,11 +195,8 @@ func (x *exhibit) addRandom(m snake.Matching) error {
 // addBand states and shows the closed curve round the arc.
 func (x *exhibit) addBand() error {
 	b, err := x.Family.Band(x.Slope)
-	if err != nil {
-		return err
-	}
-	trace, err := x.Family.Trace(x.Slope)
-	if err != nil {
+	trace, errTrace := x.Family.Trace(x.Slope)
+	if err := errors.Join(err, errTrace); err != nil {
 		return err
 	}
 	x.Facts = append(x.Facts, fact{
@@ -263,22 +257,19 @@ type drawable interface {
 
 // hang draws a picture of g in all its forms and appends it.
 func (x *exhibit) hang(p picture, g drawable, d snake.Drawing) error {
-	svg, err := g.SVG(d)
-	if err != nil {
-		return err
-	}
-	p.SVG = template.HTML(svg)
-	p.Least = leastTile * columns(g)
-	if g.Tiles() <= maxText && !d.Hexagons { // hexagons are not drawn with characters
-		if p.Text, err = g.Text(d); err != nil {
-			return err
-		}
-	}
+	inLaTeX := d
 	if d.Name != nil {
-		d.Name = labelInLaTeX
+		inLaTeX.Name = labelInLaTeX
 	}
-	if p.TikZ, err = g.TikZ(d); err != nil {
+	svg, errSVG := g.SVG(d)
+	tikz, errTikZ := g.TikZ(inLaTeX)
+	text, errText := g.Text(d)
+	if err := errors.Join(errSVG, errTikZ, errText); err != nil {
 		return err
+	}
+	p.SVG, p.TikZ, p.Least = template.HTML(svg), tikz, leastTile*columns(g)
+	if g.Tiles() <= maxText && !d.Hexagons { // hexagons are not drawn with characters
+		p.Text = text
 	}
 	x.Pictures = append(x.Pictures, p)
 	return nil

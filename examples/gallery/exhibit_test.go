@@ -10,8 +10,10 @@ import (
 	"github.com/stretchr/testify/require"
 	"pgregory.net/rapid"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
+	"example.com/onecusp/snake"
 )
 
 func exhibitAt(t require.TestingT, f orbifold.Family, s string) *exhibit {
@@ -90,7 +92,51 @@ func TestCurveHasTheTrace(t *testing.T) {
 	assert.NotEmpty(t, x.fact("Closed curve"))
 }
 
+// TestErrorsArePassedOn: what the arguments are checked for, and what nothing but an error of
+// the program can bring about, ends in an error and not in a wrong page.
+func TestErrorsArePassedOn(t *testing.T) {
+	huge := farey.MustParse("1/" + strings.Repeat("9", 40))
+	_, err := newExhibit(orbifold.Family{}, huge, 1)
+	assert.ErrorIs(t, err, orbifold.ErrTooLarge)
+	_, err = newExhibit(orbifold.Family{}, farey.MustParse("1/20000"), 1) // too long to draw from
+	assert.ErrorIs(t, err, snake.ErrTooLong)
+	_, err = newExhibit(orbifold.Family{}, farey.MustParse("1/600"), 1) // too long to expand
+	assert.ErrorIs(t, err, orbifold.ErrTooLarge)
+	_, err = newGallery(t.Context(), options{families: []orbifold.Family{{}}, slopes: []farey.Slope{huge}})
+	assert.ErrorIs(t, err, orbifold.ErrTooLarge)
+
+	x := &exhibit{Slope: huge}
+	for _, add := range []func() error{x.addCounts, x.addExpansion, x.addBand} {
+		assert.ErrorIs(t, add(), orbifold.ErrTooLarge)
+	}
+	long := snake.FromWord(must(contfrac.ParseWord("L20000"))(t))
+	x = &exhibit{Slope: farey.MustParse("1/2"), graph: long}
+	assert.ErrorIs(t, x.addCounts(), snake.ErrTooLong)
+	assert.ErrorIs(t, x.hang(picture{}, long, snake.Drawing{}), snake.ErrTooLong)
+
+	x = exhibitAt(t, orbifold.Family{}, "3/7")
+	assert.ErrorIs(t, x.addRandom(must(snake.ParseMatching("0101"))(t)), snake.ErrNotMatching)
+	x.set = must(must(x.set.WithTile(1, true))(t).WithTile(1, false))(t) // empty
+	assert.ErrorIs(t, x.addMinimal(), snake.ErrIndex)
+	_, err = x.random(rand.NewPCG(1, 1))
+	assert.ErrorIs(t, err, snake.ErrIndex)
+}
+
+func must[T any](v T, err error) func(require.TestingT) T {
+	return func(t require.TestingT) T {
+		require.NoError(t, err)
+		return v
+	}
+}
+
 func TestPlural(t *testing.T) {
 	assert.Equal(t, "1 tile", plural(1, "tile", "tiles"))
 	assert.Equal(t, "0 tiles", plural(0, "tile", "tiles"))
+}
+
+func TestSignsOfLabels(t *testing.T) {
+	assert.Equal(t, "∞", labelSign(orbifold.LabelOf(farey.Infinity)))
+	assert.Equal(t, `$\infty$`, labelInLaTeX(orbifold.LabelOf(farey.Infinity)))
+	assert.Equal(t, "1", labelInLaTeX(orbifold.LabelOf(farey.One)))
+	assert.Empty(t, labelSign(snake.NoLabel))
 }

@@ -1,6 +1,7 @@
 package main
 
 import (
+	"errors"
 	"html/template"
 
 	"example.com/onecusp/farey"
@@ -16,12 +17,9 @@ type keyItem struct {
 
 // newKey explains the marks with pictures of a single tile.
 func newKey() ([]keyItem, error) {
-	minimal, err := snake.ParseMatching("0")
-	if err != nil {
-		return nil, err
-	}
-	maximal, err := snake.ParseMatching("1")
-	if err != nil {
+	minimal, errMinimal := snake.ParseMatching("0")
+	maximal, errMaximal := snake.ParseMatching("1")
+	if err := errors.Join(errMinimal, errMaximal); err != nil {
 		return nil, err
 	}
 	var key []keyItem
