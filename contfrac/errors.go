@@ -19,6 +19,8 @@ var (
 	ErrNegativeEntry = errors.New("negative matrix entry")
 	// ErrTrace: a matrix that is not hyperbolic, or has a negative trace.
 	ErrTrace = errors.New("trace out of range")
+	// ErrDiscriminant: a number under a root is not positive, or is a square.
+	ErrDiscriminant = errors.New("discriminant out of range")
 )
 
 // Limits on what is read, and on what is made out of something much shorter.

@@ -34,3 +34,17 @@ func SetPowerBits(n int64) int64 {
 	powerBits = n
 	return old
 }
+
+// SetWordRootBits sets the size up to which periods are followed in words.
+func SetWordRootBits(n int) int {
+	old := wordRootBits
+	wordRootBits = n
+	return old
+}
+
+// SetPeriodLimits sets the limits of expansions.
+func SetPeriodLimits(terms, bytes int) (int, int) {
+	a, b := periodLimit, packedLimit
+	periodLimit, packedLimit = terms, bytes
+	return a, b
+}

@@ -110,11 +110,14 @@ func (f Fraction) Rat() (*big.Rat, error) {
 // Convergents yields numerator and denominator of [a₀], [a₀; a₁], … in order,
 // as fresh integers in lowest terms, by the recurrence pₖ = aₖpₖ₋₁ + pₖ₋₂: two
 // multiplications and two additions for each. It can be run again.
-func (f Fraction) Convergents() iter.Seq2[*big.Int, *big.Int] {
+func (f Fraction) Convergents() iter.Seq2[*big.Int, *big.Int] { return convergents(f.All()) }
+
+// convergents is Convergents for a sequence of terms.
+func convergents(terms iter.Seq2[int, *big.Int]) iter.Seq2[*big.Int, *big.Int] {
 	return func(yield func(*big.Int, *big.Int) bool) {
 		p0, q0 := new(big.Int), big.NewInt(1)
 		p1, q1 := big.NewInt(1), new(big.Int)
-		for _, a := range f.All() {
+		for _, a := range terms {
 			p0.Add(p0, Product(a, p1))
 			q0.Add(q0, Product(a, q1))
 			p0, p1, q0, q1 = p1, p0, q1, q0
