@@ -1,5 +1,6 @@
-// Package contfrac computes with finite continued fractions, words in the
-// letters L and R, and 2×2 integer matrices, at any size.
+// Package contfrac computes with finite and periodic continued fractions, words in the
+// letters L and R, 2×2 integer matrices, quadratic irrationals and indefinite
+// binary quadratic forms, at any size.
 //
 // One object is seen from several sides here. A positive continued fraction
 // [a₁; a₂, …] is a word in two letters, whose runs are a₁, a₂, … letters long:
@@ -14,18 +15,24 @@
 // of the run lengths is the sum of the four entries of the matrix of the word.
 // The same numbers have a second expansion, with signs −, as type Minus.
 //
+// An infinite word that repeats is a quadratic irrational: type Surd, with type
+// Periodic for its continued fraction and type Form for the quadratic form of which it is
+// a root. A hyperbolic matrix is, up to conjugation, a cyclic word (Matrix.Cycle):
+// the period of the continued fraction of its fixed points.
+//
 // # Size
 //
 // Words and fractions are held packed, about a byte a run or a term, and are passed by
 // value. Products of long sequences go by balanced trees, expansions by a
 // half-gcd, and every multiplication of large integers through Product. The halves
-// of a product tree from about 130 000 bits on are worked out at the same time.
+// of a product tree from about 130 000 bits on are worked out at the same time. Periods are
+// followed term by term, up to MaxPeriod terms.
 //
 // # Conventions
 //
 // All types are immutable, safe for concurrent use (WordBuilder excepted),
 // and have a zero value that means something: the empty word, the empty
-// fraction 1/0, the identity matrix. Every *big.Int and slice that is returned is fresh, and
+// fraction 1/0, the identity matrix, the golden ratio and its form. Every *big.Int and slice that is returned is fresh, and
 // none that is passed in is modified or kept. Errors wrap the sentinel errors
 // of the package. The verb %s writes values in full and %v long values shortened;
 // text and JSON decoders accept only what the encoders write.

@@ -130,3 +130,119 @@ func ExampleProduct() {
 	fmt.Println(contfrac.Product(x, x).BitLen())
 	// Output: 2000001
 }
+
+// A matrix is conjugate to a word in L and R, up to rotation.
+func ExampleMatrix_Cycle() {
+	m := contfrac.NewMatrix(big.NewInt(-9), big.NewInt(-5), big.NewInt(29), big.NewInt(16))
+	w, err := m.Cycle()
+	fmt.Println(w, err)
+	fmt.Println(w.Matrix(), w.Matrix().Trace(), m.Trace())
+	_, err = contfrac.Matrix{}.Cycle()
+	fmt.Println(err)
+	// Output:
+	// RLLLLL <nil>
+	// [[6, 1], [5, 1]] 7 7
+	// contfrac: cycle of a matrix: trace 2: at least 3 is accepted: trace out of range
+}
+
+func ExampleWord_LeastRotation() {
+	w, _ := contfrac.ParseWord("LLRRLRL")
+	fmt.Println(w.LeastRotation())
+	// Output: RLLLRRL
+}
+
+func ExampleSurd_Periodic() {
+	x, _ := contfrac.SurdOf(0, 94, 1)
+	p, err := x.Periodic()
+	fmt.Printf("%s %v\n", p, err)
+	fmt.Println(p.Surd())
+	s, _ := x.Decimal(30)
+	fmt.Println(s)
+	// Output:
+	// [9; (1, 2, 3, 1, 1, 5, 1, 8, 1, 5, 1, 1, 3, 2, 1, 18)] <nil>
+	// (0 + √94)/1
+	// 9.695359714832658028148881150845
+}
+
+func ExampleParsePeriodic() {
+	p, err := contfrac.ParsePeriodic("[5; 1, (2, 1, 2, 1)]")
+	fmt.Println(p, err)
+	fmt.Println(p.Surd(), p.Surd().IsReduced(), p.Surd().Conjugate())
+	_, err = contfrac.ParsePeriodic("[1; (0)]")
+	fmt.Println(err)
+	// Output:
+	// [5; (1, 2)] <nil>
+	// (4 + √3)/1 false (-4 + √3)/-1
+	// contfrac: period [0]: one term or more, of at least 1, is accepted: term out of range
+}
+
+// √221/5, which is √5525/25.
+func ExampleSurd_Lagrange() {
+	p, _ := contfrac.ParsePeriodic("[7; 31, (2, 2, 1, 1)]")
+	l, err := p.Surd().Lagrange()
+	fmt.Println(l, err)
+	s, _ := l.Decimal(20)
+	fmt.Println(s)
+	lo, hi, _ := l.Enclosure(40)
+	fmt.Println(lo, hi)
+	// Output:
+	// (0 + √5525)/25 <nil>
+	// 2.97321374946370110452
+	// 2.97321374946 2.973213749465
+}
+
+// How well the convergents of √2 do: q·|q√2 − p| falls to 1/√8.
+func ExampleSurd_ApproximationConstant() {
+	x, _ := contfrac.SurdOf(0, 2, 1)
+	p, _ := x.Periodic()
+	n := 0
+	for num, den := range p.Convergents() {
+		c, _ := x.ApproximationConstant(num, den)
+		s, _ := c.Decimal(8)
+		fmt.Printf("%s/%s %s\n", num, den, s)
+		if n++; n == 4 {
+			break
+		}
+	}
+	// Output:
+	// 1/1 0.41421356
+	// 3/2 0.34314575
+	// 7/5 0.35533906
+	// 17/12 0.35324702
+}
+
+func ExampleForm() {
+	f, _ := contfrac.FormOf(5, 11, -5)
+	fmt.Println(f.Discriminant())
+	n, _ := f.Minimum()
+	fmt.Println("minimum", n)
+	for g := range f.Cycle() {
+		fmt.Println(g)
+	}
+	m, _ := f.Automorph()
+	fmt.Println(m)
+	first, second := f.Roots()
+	fmt.Println(first, second)
+	// Output:
+	// 221
+	// minimum 5
+	// (5, 11, -5)
+	// (-5, 9, 7)
+	// (7, 5, -7)
+	// (-7, 9, 5)
+	// [[2, 5], [5, 13]]
+	// (-11 + √221)/10 (11 + √221)/-10
+}
+
+func ExampleForm_Equivalent() {
+	f, _ := contfrac.FormOf(1, 0, -3)
+	g, _ := contfrac.FormOf(-1, 0, 3)
+	_, ok, _ := f.Equivalent(g)
+	fmt.Println(ok)
+	h, _ := contfrac.FormOf(-2, -2, 1)
+	m, ok, _ := f.Equivalent(h)
+	fmt.Println(ok, m)
+	// Output:
+	// false
+	// true [[1, 2], [-1, -1]]
+}

@@ -105,3 +105,62 @@ func FuzzTermsJSON(f *testing.F) {
 		}
 	})
 }
+
+func FuzzParsePeriodic(f *testing.F) {
+	for _, s := range []string{"[(1)]", "[9; (1, 2, 3)]", "[0; 4, (1)]", "[-3; (2; 1)]", "[1; (18446744073709551616)]", "[()]", "[1, (2)]", "[1; (0)]"} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, s string) {
+		x, err := contfrac.ParsePeriodic(s)
+		var y contfrac.Periodic
+		strict := y.UnmarshalText([]byte(s))
+		if err != nil {
+			require.Error(t, strict)
+			return
+		}
+		again, err := contfrac.ParsePeriodic(x.String())
+		require.NoError(t, err)
+		require.Equal(t, x, again)
+		require.Equal(t, x.String() == s, strict == nil)
+		if len(s) < 1000 {
+			back, err := x.Surd().Periodic()
+			require.NoError(t, err)
+			require.Equal(t, x, back)
+		}
+	})
+}
+
+func FuzzParseSurd(f *testing.F) {
+	for _, s := range []string{"(1 + √5)/2", "(2 + √20)/4", "(-3 + √7)/-2", "(0 + √4)/1", "(0 + √2)/0", "√2"} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, s string) {
+		x, err := contfrac.ParseSurd(s)
+		var y contfrac.Surd
+		strict := y.UnmarshalText([]byte(s))
+		if err != nil {
+			require.Error(t, strict)
+			return
+		}
+		again, err := contfrac.ParseSurd(x.String())
+		require.NoError(t, err)
+		require.True(t, x.Equal(again))
+		require.Equal(t, x.String() == s, strict == nil)
+	})
+}
+
+func FuzzParseForm(f *testing.F) {
+	for _, s := range []string{"(1, -1, -1)", "(5, 11, -5)", "(1, 2, 1)", "(1, 0, 1)", "(1,2,3)"} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, s string) {
+		x, err := contfrac.ParseForm(s)
+		var y contfrac.Form
+		strict := y.UnmarshalText([]byte(s))
+		require.Equal(t, err == nil, strict == nil)
+		if err == nil {
+			require.Equal(t, s, x.String())
+			require.True(t, x.Equal(y))
+		}
+	})
+}

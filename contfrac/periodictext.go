@@ -37,15 +37,15 @@ func ParsePeriodic(s string) (Periodic, error) {
 		if pre.n == 0 || separator != separatorAfter(pre.n-1) {
 			return bad()
 		}
-		// Inside, only commas: as the tail of a fraction that begins with a whole number.
-		body = "0;" + body
+		// The first term of all is past, so all separators are commas.
+		if strings.Contains(body, ";") {
+			return bad()
+		}
+		body = strings.Replace(body, ",", ";", 1)
 	}
 	period, err := ParseFraction("[" + body + "]")
 	if err != nil {
 		return Periodic{}, err
-	}
-	if head != "" {
-		period = period.tail()
 	}
 	return NewPeriodic(pre, period)
 }
