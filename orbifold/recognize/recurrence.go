@@ -1,0 +1,132 @@
+package recognize
+
+import (
+	"context"
+	"fmt"
+	"math/big"
+
+	"example.com/onecusp/orbifold"
+)
+
+// Recurrence is an answer of Sequence.Recurrence.
+type Recurrence struct {
+	// Verdict is Found or Undecided; no list of finitely many terms is without a
+	// recurrence.
+	Verdict Verdict
+	// Rule is the recurrence with its first terms; order 0 when undecided.
+	Rule orbifold.Recurrence
+	// Surplus is the number of terms that confirm it: those past the 2·order that
+	// determine it. At least 1 when found.
+	Surplus int
+}
+
+// Recurrence returns the minimal linear recurrence with constant rational
+// coefficients of the terms. It is Found when 2·order is less than the number
+// of terms: it holds for all of them exactly, no other recurrence of its order
+// or less does, and Surplus terms could have refuted it. Else the answer is
+// Undecided. Three terms at least are needed for a sequence that is not zero.
+//
+// It is found modulo primes of 62 bits by the Berlekamp–Massey algorithm,
+// raised by the Chinese remainder theorem and rational reconstruction until it
+// satisfies the terms, and checked over the integers. "Undecided" rests on
+// three primes; it could be said wrongly only of a recurrence with a denominator divisible by
+// all of them. Cost for n terms of b bits: O(n·order) word operations for each prime, of which there are
+// as many as the coefficients have words, and O(n·order) products of b bits.
+// The only error for a sequence with terms is that of ctx.
+func (s Sequence) Recurrence(ctx context.Context) (Recurrence, error) {
+	if len(s.terms) == 0 {
+		return Recurrence{}, fmt.Errorf("recognize: recurrence of a sequence without terms: %w", ErrEmpty)
+	}
+	if ctx == nil {
+		ctx = context.Background()
+	}
+	n := len(s.terms)
+	bits := 8
+	for _, a := range s.terms {
+		bits = max(bits, a.BitLen())
+	}
+	best := n + 1 // the least length modulo a prime
+	var lifted lifting
+	tried, next := 0, 1
+	for p := range primes {
+		f := field{p}
+		c, err := f.shortest(ctx, f.reduce(s.terms))
+		if err != nil {
+			return Recurrence{}, fmt.Errorf("recognize: recurrence of %d terms: %w", n, err)
+		}
+		tried++
+		if length := len(c) - 1; length < best {
+			best, lifted, next = length, lifting{}, 1
+		} else if length > best {
+			continue
+		}
+		if 2*best >= n {
+			if tried == 3 {
+				break
+			}
+			continue
+		}
+		lifted.add(c, p)
+		if lifted.primes < next {
+			continue
+		}
+		next = lifted.primes + (lifted.primes+1)/2
+		if rule, ok := lifted.rule(s.terms); ok {
+			return Recurrence{Found, rule, n - 2*best}, nil
+		}
+		// Coefficients are quotients of minors of the Hankel matrix, so this many
+		// primes would show them.
+		if lifted.primes > 3+(2*best*(bits+best))/60 {
+			break
+		}
+	}
+	return Recurrence{}, nil
+}
+
+// lifting is a polynomial modulo a product of primes.
+type lifting struct {
+	c       []*big.Int
+	modulus *big.Int
+	primes  int
+}
+
+// add combines with the polynomial modulo one more prime.
+func (l *lifting) add(c []uint64, p uint64) {
+	if l.primes++; l.primes == 1 {
+		l.modulus = new(big.Int).SetUint64(p)
+		for _, x := range c {
+			l.c = append(l.c, new(big.Int).SetUint64(x))
+		}
+		return
+	}
+	f := field{p}
+	here := f.reduce(append(l.c[:len(l.c):len(l.c)], l.modulus))
+	inverse := f.inverse(here[len(here)-1])
+	t := new(big.Int)
+	for i, x := range c {
+		t.SetUint64(f.mul(f.sub(x, here[i]), inverse))
+		l.c[i].Add(l.c[i], t.Mul(t, l.modulus))
+	}
+	l.modulus.Mul(l.modulus, t.SetUint64(p))
+}
+
+// rule returns the recurrence with the polynomial over Q, if it holds for the
+// terms and is the shortest there.
+func (l *lifting) rule(terms []*big.Int) (orbifold.Recurrence, bool) {
+	d := len(l.c) - 1
+	c := make([]*big.Rat, d+1)
+	for i, x := range l.c {
+		r, ok := rational(x, l.modulus)
+		if !ok {
+			return orbifold.Recurrence{}, false
+		}
+		c[d-i] = r
+	}
+	rule, err := orbifold.NewRecurrence(orbifold.NewPolynomial(c...), terms[:d]...)
+	if err != nil || rule.Check(terms) != nil {
+		return orbifold.Recurrence{}, false
+	}
+	// The generating function tells the length of the shortest.
+	g := rule.GeneratingFunction()
+	return rule, max(g.Denominator().Degree(), g.Numerator().Degree()+1) == d
+}
