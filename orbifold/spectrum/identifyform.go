@@ -1,0 +1,155 @@
+package spectrum
+
+import (
+	"context"
+	"fmt"
+	"math/big"
+
+	"example.com/onecusp/contfrac"
+	"example.com/onecusp/farey"
+	"example.com/onecusp/orbifold"
+)
+
+// IdentifyForm returns the slopes s in Q ∪ {∞} whose form F_s (Form) is properly equivalent to
+// a positive multiple of g, increasing, 1/0 last; none if there are none. It decides this for all
+// weights.
+//
+// The least value of g and its discriminant leave at most two numbers N for each
+// weight. Every way in which the form takes the value N, up to automorphs, is a member of its cycle,
+// with a root y modulo N, and IdentifyRoot has the slopes.
+//
+// Cost: that of going once round the cycle of g, and of IdentifyRoot. A cycle of more than
+// contfrac.MaxPeriod forms is ErrTooLarge; the other errors are those of ctx and IdentifyRoot.
+func IdentifyForm(ctx context.Context, f orbifold.Family, g contfrac.Form) ([]farey.Slope, error) {
+	found, err := identifyForms(ctx, f, g)
+	if err != nil {
+		return nil, fmt.Errorf("spectrum: slopes of the form %v: %w", g, err)
+	}
+	return found, nil
+}
+
+// IdentifySurd returns the slopes s in Q ∪ {∞} for which x is equivalent to a
+// root of the form F_s: their continued fractions agree from some places on. They are
+// increasing, 1/0 last; none if there are none. It decides this for all weights.
+//
+// They are the slopes of IdentifyForm for x.Form(), its negative, and the
+// mirror images of both under Y ↦ −Y. Cost and errors are those of IdentifyForm. For weights (0,0,0)
+// BelowThree is quicker.
+func IdentifySurd(ctx context.Context, f orbifold.Family, x contfrac.Surd) ([]farey.Slope, error) {
+	g := x.Form()
+	h, err := contfrac.NewForm(g.A(), new(big.Int).Neg(g.B()), g.C())
+	if err != nil {
+		return nil, err
+	}
+	found, err := identifyForms(ctx, f, g, g.Neg(), h, h.Neg())
+	if err != nil {
+		return nil, fmt.Errorf("spectrum: slopes of the surd %v: %w", x, err)
+	}
+	return found, nil
+}
+
+func identifyForms(ctx context.Context, f orbifold.Family, forms ...contfrac.Form) ([]farey.Slope, error) {
+	var found slopeSet
+	for _, g := range forms {
+		g = g.Primitive()
+		least, middles, err := minima(ctx, g)
+		if err != nil {
+			return nil, err
+		}
+		for _, k := range weights(f) {
+			for _, scale := range scales(f, k, g.Discriminant(), least) {
+				n := contfrac.Product(scale, least)
+				t := trace(f.K(), n, big.NewInt(k))
+				for _, b := range middles {
+					// b of F_s is −(t − 2y).
+					y := contfrac.Product(scale, b)
+					y.Add(y, t)
+					slopes, err := IdentifyRoot(ctx, f, n, y.Mod(y.Rsh(y, 1), n))
+					if err != nil {
+						return nil, err
+					}
+					for _, s := range slopes {
+						if f.Weight(s.Class()) == k {
+							found.add(s)
+						}
+					}
+				}
+			}
+		}
+	}
+	return found.sorted(), nil
+}
+
+// minima returns the least absolute value of a primitive form, and the middle
+// coefficients b of the members (a, b, c) of its cycle with that value as a.
+func minima(ctx context.Context, g contfrac.Form) (least *big.Int, middles []*big.Int, err error) {
+	n := 0
+	for h := range g.Cycle() {
+		if err := ctxErr(ctx); err != nil {
+			return nil, nil, err
+		}
+		if n++; n > cycleLimit {
+			return nil, nil, fmt.Errorf("a cycle of more than %d forms: %w", cycleLimit, ErrTooLarge)
+		}
+		a := h.A()
+		if least == nil || a.CmpAbs(least) < 0 {
+			least, middles = new(big.Int).Abs(a), nil
+		}
+		if a.Cmp(least) == 0 {
+			middles = append(middles, h.B())
+		}
+	}
+	return least, middles, nil
+}
+
+// cycleLimit is contfrac.MaxPeriod, except in tests.
+var cycleLimit = contfrac.MaxPeriod
+
+func ctxErr(ctx context.Context) error {
+	if ctx == nil {
+		return nil
+	}
+	return ctx.Err()
+}
+
+// scales returns the integers g ≥ 1 by which a primitive form of discriminant d
+// and least value m is multiplied to be F_s for a slope of weight k: those with
+// g²d = (K·g·m − k)² − 4.
+func scales(f orbifold.Family, k int64, d, m *big.Int) []*big.Int {
+	// (K²m² − d)·g² − 2Kmk·g + k² − 4 = 0
+	km := contfrac.Product(f.K(), m)
+	a := contfrac.Product(km, km)
+	a.Sub(a, d)
+	b := new(big.Int).Mul(km, big.NewInt(k)) // half the middle coefficient
+	kk := big.NewInt(k)
+	c := kk.Mul(kk, kk)
+	c.Sub(c, big.NewInt(4))
+	var found []*big.Int
+	keep := func(num, den *big.Int) {
+		if den.Sign() == 0 {
+			return
+		}
+		g, rest := new(big.Int).QuoRem(num, den, new(big.Int))
+		if rest.Sign() == 0 && g.Sign() > 0 {
+			found = append(found, g)
+		}
+	}
+	if a.Sign() == 0 {
+		keep(c, new(big.Int).Lsh(b, 1))
+		return found
+	}
+	disc := contfrac.Product(b, b)
+	disc.Sub(disc, contfrac.Product(a, c))
+	if disc.Sign() < 0 {
+		return nil
+	}
+	root := new(big.Int).Sqrt(disc)
+	if contfrac.Product(root, root).Cmp(disc) != 0 {
+		return nil
+	}
+	keep(new(big.Int).Add(b, root), a)
+	if root.Sign() != 0 {
+		keep(new(big.Int).Sub(b, root), a)
+	}
+	return found
+}
