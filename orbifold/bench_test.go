@@ -3,6 +3,7 @@ package orbifold_test
 import (
 	"context"
 	"fmt"
+	"math"
 	"math/big"
 	"math/rand"
 	"os"
@@ -219,14 +220,35 @@ func sized(kind string, bits int64) farey.Slope {
 	}
 }
 
+// BenchmarkIdentify: budget 50 ms at 1000 digits and 2 s at 10,000, hit or miss,
+// in the classical family.
 func BenchmarkIdentify(b *testing.B) {
-	n, err := orbifold.Family{}.Number(farey.MustParse("130/631"))
-	if err != nil {
-		b.Fatal(err)
+	for _, digits := range []int{100, 1000, 10_000} {
+		// A number of that many digits: slopes p/q with p/q near 1/e.
+		q := int64(float64(digits) * math.Ln10 / 1.02)
+		s, err := farey.FromInts(q*1000/2718, q)
+		if err != nil {
+			b.Fatal(err)
+		}
+		n, err := orbifold.Family{}.Number(s)
+		if err != nil {
+			b.Fatal(err)
+		}
+		for name, n := range map[string]*big.Int{"hit": n, "miss": new(big.Int).Add(n, big.NewInt(1))} {
+			b.Run(fmt.Sprintf("%s/%d", name, digits), func(b *testing.B) {
+				for b.Loop() {
+					_, _ = orbifold.Family{}.Identify(context.Background(), n)
+				}
+				b.ReportMetric(float64(len(n.String())), "digits")
+			})
+		}
 	}
-	b.Logf("%d digits", len(n.String()))
+}
+
+func BenchmarkNearest(b *testing.B) {
+	n := new(big.Int).Exp(big.NewInt(10), big.NewInt(1000), nil)
 	for b.Loop() {
-		_, _ = orbifold.Family{}.Identify(context.Background(), n)
+		_, _, _ = orbifold.Family{}.Nearest(context.Background(), n, 5)
 	}
 }
 

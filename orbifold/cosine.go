@@ -343,7 +343,7 @@ func cosineFixed(n int, prec uint) *big.Int {
 			sum.Add(sum, term)
 		}
 	}
-	return sum.Rsh(sum, w-prec-1)
+	return roundShift(sum, w-prec-1)
 }
 
 // piFixed returns an integer within 1 of 2^w·π, by π = 16·arctan(1/5) −
@@ -365,7 +365,7 @@ func piFixed(w uint) *big.Int {
 			power.Quo(power, square)
 		}
 	}
-	return sum.Rsh(sum, v-w)
+	return roundShift(sum, v-w)
 }
 
 // String writes the element as a polynomial in c = 2cos(π/n), constant first:

@@ -99,6 +99,13 @@ func ExampleFamily_Identify() {
 	// [2/5 4/3] <nil>
 }
 
+func ExampleFamily_Nearest() {
+	below, above, err := orbifold.Family{}.Nearest(context.Background(), big.NewInt(1000), 2)
+	fmt.Println(below, above, err)
+	// Output:
+	// [4/9 1/8] [2/9 1/9] <nil>
+}
+
 func ExampleFamily_Ascending() {
 	i := 0
 	for n := range (orbifold.Family{}).Ascending() {

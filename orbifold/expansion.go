@@ -124,7 +124,8 @@ func full(e []int) (x exponents) {
 	return x
 }
 
-// Eval returns the value at nonzero rational lengths.
+// Eval returns the value at rational lengths, which must not be 0 where they are
+// divided by.
 func (x Expansion) Eval(zero, infinity, one *big.Rat) (*big.Rat, error) {
 	v, err := x.Sum().Eval(zero, infinity, one)
 	if err != nil {

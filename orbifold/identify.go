@@ -1,10 +1,13 @@
 package orbifold
 
 import (
+	"cmp"
 	"context"
+	"errors"
 	"fmt"
 	"math/big"
 	"slices"
+	"sync"
 
 	"example.com/onecusp/farey"
 )
@@ -13,25 +16,176 @@ import (
 // symmetry class (the representative of Domain), increasing, 1/0 last; none if
 // no slope does. An n below 1 is ErrNotPositive.
 //
-// With a nil error the list is complete, for equal and unequal weights alike:
-// numbers grow strictly along every path from the base triangle, and every
-// slope with a number up to n is looked at, about G·(ln n)² of them for a
-// constant G of the family, with exact arithmetic. When ctx ends first, the result
-// is nil and the error that of ctx.
+// With a nil error the list is complete, for equal and unequal weights alike;
+// no unproved ordering is used. Every slope but the base slopes lies in the
+// fan of the older of its two parents A, where numbers grow, and its number is
+// above N_A². So all slopes A with numbers up to √n are visited, some
+// G·(ln n)²/4 for a constant G of the family, and in both sides of the fan of each the places
+// are found where the logarithm can be that of n, by enclosures whose
+// error is bounded. Those few candidates are settled by residues and, when these agree, by the
+// exact number. It does not factor n, and it uses all processors.
+//
+// When ctx ends first, the result is nil and the error that of ctx.
 func (f Family) Identify(ctx context.Context, n *big.Int) ([]farey.Slope, error) {
+	ctx = contextOf(ctx)
 	if n == nil || n.Sign() <= 0 {
 		return nil, fmt.Errorf("orbifold: slopes that carry %s: %w", brief(n), ErrNotPositive)
 	}
-	ctx = contextOf(ctx)
+	l := logInt(n, 80, 128)
+	candidates, err := f.between(ctx, l.lo, l.hi)
+	if err != nil {
+		return nil, fmt.Errorf("orbifold: slopes that carry %s: %w", brief(n), err)
+	}
+	var residues [3]uint64
+	for i, p := range Primes() {
+		residues[i] = wordResidues{p}.From(n)
+	}
 	var found []farey.Slope
-	for node := range f.walk(true, atMost(n)) {
+	for _, s := range candidates {
 		if err := ctx.Err(); err != nil {
 			return nil, fmt.Errorf("orbifold: slopes that carry %s: %w", brief(n), err)
 		}
-		if node.value().Cmp(n) == 0 {
-			found = append(found, node.slope)
+		p := s.Path()
+		same := true
+		for i, m := range Primes() {
+			same = same && f.numberMod64(p, m) == residues[i]
+		}
+		if !same {
+			continue
+		}
+		// As long as n, within a bit or so: whoever holds n can hold it.
+		x, err := f.WithLimit(int64(n.BitLen())+64).NumberContext(ctx, s)
+		switch {
+		case errors.Is(err, ErrTooLarge):
+		case err != nil:
+			return nil, err
+		case x.Cmp(n) == 0:
+			found = append(found, s)
+		}
+	}
+	return found, nil
+}
+
+// between returns the slopes of the domain whose numbers may have logarithms from lo
+// to hi, each once, increasing: all that do, and some that are off by a tiny
+// part.
+func (f Family) between(ctx context.Context, lo, hi *big.Float) ([]farey.Slope, error) {
+	var found []farey.Slope
+	h, ok := newHunt(f, lo, hi)
+	if !ok { // weights past the precision of float64: few slopes, all visited
+		_, bits := span{lo, hi}.bits()
+		bound := new(big.Int).Lsh(unit, uint(bits.Uint64()))
+		for node := range f.walk(true, atMost(bound)) {
+			if err := ctx.Err(); err != nil {
+				return nil, err
+			}
+			if l := logInt(node.value(), 80, 128); l.hi.Cmp(lo) >= 0 && l.lo.Cmp(hi) <= 0 {
+				found = append(found, node.slope)
+			}
+		}
+	} else {
+		var lock sync.Mutex
+		err := h.run(ctx, func(s farey.Slope) {
+			lock.Lock()
+			defer lock.Unlock()
+			found = append(found, s)
+		})
+		if err != nil {
+			return nil, err
 		}
 	}
 	slices.SortFunc(found, farey.Slope.Cmp)
-	return found, nil
+	return slices.CompactFunc(found, farey.Slope.Equal), nil
+}
+
+// MaxNearest is the largest number of slopes that Nearest returns on each
+// side.
+const MaxNearest = 1 << 16
+
+// Nearest returns the k slopes with the largest numbers below n and the k slopes
+// with the smallest numbers above it, nearest first, one for each symmetry class
+// (the representative of Domain); equal numbers at inequivalent slopes come in the order of
+// the slopes. The order is exact. There are fewer below when
+// the family has no more. Slopes that carry n itself are in neither list. An n
+// below 1, and a k outside 0 … MaxNearest, are ErrNotPositive.
+//
+// It finds them as Identify does, in a window about ln n that is widened until
+// it holds enough; cost as for Identify, and O(k·log k) comparisons.
+func (f Family) Nearest(ctx context.Context, n *big.Int, k int) (below, above []farey.Slope, err error) {
+	ctx = contextOf(ctx)
+	if n == nil || n.Sign() <= 0 {
+		return nil, nil, fmt.Errorf("orbifold: slopes near %s: %w", brief(n), ErrNotPositive)
+	}
+	if k < 0 || k > MaxNearest {
+		return nil, nil, fmt.Errorf("orbifold: %d slopes near %s: want 0 to %d: %w", k, brief(n), MaxNearest, ErrNotPositive)
+	}
+	wrap := func(err error) error { return fmt.Errorf("orbifold: slopes near %s: %w", brief(n), err) }
+	if k == 0 {
+		return nil, nil, nil
+	}
+	center := logInt(n, 80, 128)
+	// About G·X slopes lie in a window of width 1/2 about X, for a constant of the order of 1.
+	x, _ := center.hi.Float64()
+	for width := float64(k+1) / (x + 1); ; width *= 2 {
+		w := big.NewFloat(width)
+		lo, hi := down(128).Sub(center.lo, w), up(128).Add(center.hi, w)
+		slopes, err := f.between(ctx, lo, hi)
+		if err != nil {
+			return nil, nil, wrap(err)
+		}
+		below, above = nil, nil
+		for _, s := range slopes {
+			c, in, err := f.side(ctx, s, n, span{lo, hi})
+			switch {
+			case err != nil:
+				return nil, nil, wrap(err)
+			case !in:
+			case c < 0:
+				below = append(below, s)
+			case c > 0:
+				above = append(above, s)
+			}
+		}
+		if (len(below) >= k || lo.Sign() < 0) && len(above) >= k {
+			break
+		}
+	}
+	var failed error
+	order := func(sign int) func(s, t farey.Slope) int {
+		return func(s, t farey.Slope) int {
+			c, err := f.CompareContext(ctx, s, t)
+			if err != nil && failed == nil {
+				failed = err
+			}
+			return cmp.Or(sign*c, s.Cmp(t))
+		}
+	}
+	slices.SortFunc(below, order(-1))
+	slices.SortFunc(above, order(1))
+	if failed != nil {
+		return nil, nil, wrap(failed)
+	}
+	return below[:min(k, len(below))], above[:min(k, len(above))], nil
+}
+
+// side compares the number at s with n; in is false when its logarithm is not
+// certainly in the window, so that others like it may be missing.
+func (f Family) side(ctx context.Context, s farey.Slope, n *big.Int, window span) (c int, in bool, err error) {
+	l, err := f.logSpan(ctx, s, 96)
+	if err != nil {
+		return 0, false, err
+	}
+	in = l.lo.Cmp(window.lo) >= 0 && l.hi.Cmp(window.hi) <= 0
+	at := logInt(n, 80, 128)
+	switch {
+	case l.hi.Cmp(at.lo) < 0:
+		return -1, in, nil
+	case l.lo.Cmp(at.hi) > 0:
+		return 1, in, nil
+	}
+	x, err := f.WithLimit(int64(n.BitLen())+64).NumberContext(ctx, s)
+	if err != nil {
+		return 0, false, err
+	}
+	return x.Cmp(n), in, nil
 }

@@ -75,8 +75,8 @@ func logUnit(t *big.Int, w, prec uint) span {
 // ln m = 2^(r+1)·artanh((m′−1)/(m′+1)) with m′ = m^(1/2^r) by the power series.
 // In units of 2^−v each rounding of m and of a root is below 1 and halved by the
 // roots after it (sum below 2), the quotient adds 1, each of the n terms at
-// most 2: below 2^(r+1)·(2n + 4) in all, and v − w makes that less than 1/2. The
-// other half is that of e·ln 2.
+// most 2: below 2^(r+1)·(2n + 4) in all, less than 1/4 of 2^−w. That of e·ln 2 is less
+// than 1/8 of it, and rounding the sum adds 1/2.
 func fixedLog(x *big.Int, w uint) *big.Int {
 	e := x.BitLen() - 1
 	r := uint(math.Sqrt(float64(w))) / 2
@@ -102,11 +102,18 @@ func fixedLog(x *big.Int, w uint) *big.Int {
 		z.Mul(z, z2).Rsh(z, v)
 		sum.Add(sum, q.Quo(z, big.NewInt(k)))
 	}
-	sum.Rsh(sum, v-w-r-1)
-	return sum.Add(sum, ln2Times(e, w))
+	g := v - r - 1
+	sum.Add(sum, ln2Times(e, g))
+	return roundShift(sum, g-w)
 }
 
-// ln2Times returns an integer within 1/2 of 2^w·e·ln 2, rounded down or up, by
+// roundShift returns x/2^n rounded to the nearest integer, n ≥ 1. It overwrites
+// x.
+func roundShift(x *big.Int, n uint) *big.Int {
+	return x.Add(x, new(big.Int).Lsh(unit, n-1)).Rsh(x, n)
+}
+
+// ln2Times returns an integer within 1 of 2^w·e·ln 2, by
 // ln 2 = 18·artanh(1/26) − 2·artanh(1/4801) + 8·artanh(1/8749).
 func ln2Times(e int, w uint) *big.Int {
 	// Each series is off by less than 1 a term, fewer than v terms: below
@@ -125,6 +132,5 @@ func ln2Times(e int, w uint) *big.Int {
 		sum.Add(sum, part.Mul(part, big.NewInt(s.c)))
 	}
 	sum.Mul(sum, big.NewInt(int64(e)))
-	half := new(big.Int).Lsh(big.NewInt(1), v-w-1)
-	return sum.Add(sum, half).Rsh(sum, v-w)
+	return roundShift(sum, v-w)
 }

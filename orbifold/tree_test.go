@@ -1,7 +1,9 @@
 package orbifold_test
 
 import (
+	"cmp"
 	"context"
+	"maps"
 	"math/big"
 	"slices"
 	"testing"
@@ -200,6 +202,115 @@ func TestIdentifyIsComplete(t *testing.T) {
 				require.Equal(t, want[n], got, "%d in %v", n, f)
 			}
 		}
+	}
+}
+
+// TestIdentifyIsTheWalkOfAllSlopes compares with every slope up to a bound, for
+// weights up to past the range of float64.
+func TestIdentifyIsTheWalkOfAllSlopes(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := rapid.OneOf(families(), families(), bigWeights()).Draw(t, "family")
+		bound := new(big.Int).Exp(big.NewInt(10), big.NewInt(rapid.Int64Range(1, 25).Draw(t, "digits")), nil)
+		want := map[string]map[farey.Key]bool{}
+		for n := range f.Within(bound) {
+			text := n.Number().String()
+			if want[text] == nil {
+				want[text] = map[farey.Key]bool{}
+			}
+			want[text][f.Representative(n.Slope()).Key()] = true
+		}
+		texts := slices.Sorted(maps.Keys(want))
+		for range 5 {
+			text := rapid.SampledFrom(texts).Draw(t, "number")
+			n := integer(t, text)
+			for range 2 { // the number and the one after it
+				found := must(f.Identify(context.Background(), n))(t)
+				assert.Len(t, found, len(want[n.String()]), "%s in %v", n, f)
+				for _, s := range found {
+					assert.True(t, want[n.String()][s.Key()], "%s in %v: %v", n, f, s)
+				}
+				n.Add(n, big.NewInt(1))
+				if n.Cmp(bound) > 0 {
+					break
+				}
+			}
+		}
+	})
+}
+
+func TestIdentifyAndNumberUndoEachOtherFarOut(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f, s := families().Draw(t, "family"), slopesOn(paths(4, 1, 2, 3, 5), paths(2, from(1, 20)...), paths(1, 100, 300), paths(8, 1)).Draw(t, "slope")
+		if rapid.IntRange(0, 3).Draw(t, "large weights") == 0 {
+			f, s = bigWeights().Draw(t, "family"), slopesOn(paths(2, 1, 2), paths(1, 9)).Draw(t, "slope")
+		}
+		n := must(f.Number(s))(t)
+		found := must(f.Identify(context.Background(), n))(t)
+		assert.Contains(t, keys(found), f.Representative(s).Key(), "%v at %v", f, s)
+		for _, u := range found {
+			assertEqualInt(t, n, must(f.Number(u))(t))
+		}
+		// A miss: n + 1, unless some slope has it.
+		n.Add(n, big.NewInt(1))
+		for _, u := range must(f.Identify(context.Background(), n))(t) {
+			assertEqualInt(t, n, must(f.Number(u))(t))
+		}
+	})
+}
+
+func TestNearestIsTheNeighbourhoodInTheSortedWalk(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := families().Draw(t, "family")
+		bound := big.NewInt(1_000_000_000_000)
+		var all []orbifold.Node
+		for n := range f.Within(bound) {
+			if f.Representative(n.Slope()).Equal(n.Slope()) {
+				all = append(all, n)
+			}
+		}
+		slices.SortFunc(all, func(a, b orbifold.Node) int {
+			return cmp.Or(a.Number().Cmp(b.Number()), a.Slope().Cmp(b.Slope()))
+		})
+		i := rapid.IntRange(0, len(all)/2).Draw(t, "place")
+		n := all[i].Number()
+		n.Add(n, big.NewInt(rapid.Int64Range(0, 2).Draw(t, "shift")))
+		k := rapid.IntRange(0, 5).Draw(t, "k")
+		below, above, err := f.Nearest(context.Background(), n, k)
+		require.NoError(t, err)
+		var lower, upper []orbifold.Node
+		for _, x := range all {
+			switch x.Number().Cmp(n) {
+			case -1:
+				lower = append(lower, x)
+			case 1:
+				upper = append(upper, x)
+			}
+		}
+		slices.SortFunc(lower, func(a, b orbifold.Node) int {
+			return cmp.Or(b.Number().Cmp(a.Number()), a.Slope().Cmp(b.Slope()))
+		})
+		want := func(nodes []orbifold.Node) (texts []string) {
+			for _, x := range nodes[:min(k, len(nodes))] {
+				texts = append(texts, x.Slope().String())
+			}
+			return texts
+		}
+		got := func(slopes []farey.Slope) (texts []string) {
+			for _, s := range slopes {
+				texts = append(texts, s.String())
+			}
+			return texts
+		}
+		assert.Equal(t, want(lower), got(below), "below %v in %v", n, f)
+		assert.Equal(t, want(upper), got(above), "above %v in %v", n, f)
+	})
+	for _, k := range []int{-1, orbifold.MaxNearest + 1} {
+		_, _, err := orbifold.Family{}.Nearest(context.Background(), big.NewInt(5), k)
+		assert.ErrorIs(t, err, orbifold.ErrNotPositive)
+	}
+	for _, n := range []*big.Int{nil, new(big.Int), big.NewInt(-7)} {
+		_, _, err := orbifold.Family{}.Nearest(context.Background(), n, 1)
+		assert.ErrorIs(t, err, orbifold.ErrNotPositive)
 	}
 }
 
