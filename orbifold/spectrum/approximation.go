@@ -43,10 +43,12 @@ func Approximations(f orbifold.Family, s farey.Slope) (iter.Seq[Approximation], 
 	if err != nil {
 		return nil, err
 	}
-	return approximations(x)
+	return Convergents(x)
 }
 
-func approximations(x contfrac.Surd) (iter.Seq[Approximation], error) {
+// Convergents yields the convergents of x in order. The sequence does not end;
+// the caller stops. It can be used again. Errors are those of contfrac.Surd.Periodic.
+func Convergents(x contfrac.Surd) (iter.Seq[Approximation], error) {
 	expansion, err := x.Periodic()
 	if err != nil {
 		return nil, err

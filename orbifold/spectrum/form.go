@@ -111,9 +111,6 @@ func Period(f orbifold.Family, s farey.Slope) (contfrac.Periodic, error) {
 	if err != nil {
 		return contfrac.Periodic{}, err
 	}
-	w, err := m.Cycle()
-	if err != nil {
-		return contfrac.Periodic{}, err
-	}
+	w, _ := m.Cycle() // its trace is at least 3
 	return contfrac.NewPeriodic(contfrac.Fraction{}, w.Fraction())
 }
