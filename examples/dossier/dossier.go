@@ -97,7 +97,7 @@ func newEntry(ctx context.Context, f orbifold.Family, s farey.Slope) (*entry, er
 	}
 	sections := []func(context.Context) (section, error){
 		e.numberSection, e.sizeSection, e.triangleSection, e.symmetrySection, e.arcSection,
-		e.wordSection, e.snakeSection, e.matrixSection, e.neighbourSection,
+		e.wordSection, e.snakeSection, e.matrixSection, e.formSection, e.fanSection, e.neighbourSection,
 	}
 	for _, compile := range sections {
 		part, err := compile(ctx)

@@ -1,7 +1,8 @@
 // Dossier prints and writes the whole file on one or more slopes of an exchange
 // family: the number by four routes that must agree, the slope's place among the Farey
-// triangles, its arc, word and continued fraction, its snake graph, its matrix, its
-// neighbours in size, and a certificate that is read back and checked.
+// triangles, its arc, word and continued fraction, its snake graph, its matrix, form and
+// Lagrange value, the fan round it, its neighbours in size, and a certificate that is read
+// back and checked.
 //
 //	go run ./examples/dossier                              # the scenario below
 //	go run ./examples/dossier -weights 1,1,1 3/7 5/2 -3/4  # weights and slopes of your own

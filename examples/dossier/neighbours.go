@@ -31,9 +31,9 @@ func (e *entry) neighbourSection(ctx context.Context) (section, error) {
 	}
 	s.add("Slopes with this number", "%s", strings.Join(names, ",  "))
 	if len(same) == 1 {
-		s.note("the only one up to symmetry; proved, since every slope with a number up to N was looked at")
+		s.note("the only one up to symmetry; proved, since every place was looked at where N could stand")
 	} else {
-		s.note("%d slopes that no symmetry takes to each other; proved complete, since every slope with a number up to N was looked at", len(same))
+		s.note("%d slopes that no symmetry takes to each other; proved complete, since every place was looked at where N could stand", len(same))
 	}
 	s.Table = &table{Caption: "In the increasing list of the numbers, one slope of each symmetry class", Head: []string{"Place", "Number", "Slope"}, Marked: -1}
 	own := e.family.Representative(e.Slope)

@@ -294,3 +294,16 @@ func TestDisagreementIsShouted(t *testing.T) {
 	assert.Equal(t, "NO", yesNo(false))
 	assert.Equal(t, []string{"name", "", "", notRun, "call"}, countRow("name", orbifold.Count{Method: orbifold.NotRun}, big.NewInt(1), "call"))
 }
+
+// The form, the Lagrange value and the fan of 3/7 in the classical family:
+// √(9 − 4/169²) is a point of the spectrum below 3 ("An Introduction to
+// Diophantine Approximation", Cambridge 1957, ch. II), and the numbers beside
+// 169 follow y(n+1) = 3·169·y(n) − y(n−1).
+func TestFormAndFanOfAMarkovNumber(t *testing.T) {
+	d, err := newDossier(context.Background(), orbifold.Family{}, []farey.Slope{farey.MustParse("3/7")})
+	require.NoError(t, err)
+	text := d.text()
+	root := math.Sqrt(9 - 4.0/(169*169))
+	assert.Contains(t, text, "√257045/169 ≈ "+strconv.FormatFloat(root, 'f', 12, 64))
+	assert.Contains(t, text, "a(n) = 507·a(n−1) − a(n−2)")
+}
