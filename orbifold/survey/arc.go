@@ -10,6 +10,7 @@ import (
 type arc struct {
 	n *big.Int
 	v vertex // with its length φ, not rounded any wider
+	f int64  // its length f, 0 until it is asked for
 }
 
 // edge is an edge of a triangle with a below b and the third vertex c on the side
@@ -47,7 +48,7 @@ func (e edge) behind(front *arc) (left, right edge) {
 // base returns the base arcs by class, and the edges of the base triangle in the
 // order in which a walk takes them.
 func (s *scale) base() (arcs [3]*arc, edges [3]edge) {
-	one := big.NewInt(1)
+	one := big.NewInt(1) // shared, never changed
 	zero := s.arc(one, pack(0, 1))
 	infinity := s.arc(one, pack(1, 0))
 	diagonal := s.arc(one, pack(1, 1))

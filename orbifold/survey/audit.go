@@ -27,7 +27,9 @@ import (
 // identity to hyperbolic cone-surfaces", J. Differential Geom. 72 (2006)). Far out
 // the terms are smaller than any floating-point number, yet the identity is one of
 // fractions, so it is tested modulo the prime 2⁶¹ − 1, where a lost term is as
-// large as any other: a faulty walk passes with a chance of 2⁻⁶¹.
+// large as any other: a faulty walk passes with a chance of 2⁻⁶¹. (Weights past 2⁶¹
+// may be congruent to smaller ones, and subtrees may then have equal sums that are
+// not equal before the reduction.)
 type Audit struct {
 	// Turns is the number of edges where the walk turned back: one more than
 	// the slopes visited, for each edge where it began.
@@ -48,8 +50,6 @@ type Audit struct {
 	SumLo     string `json:"sumLo"`
 	SumHi     string `json:"sumHi"`
 	Remainder string `json:"remainder"`
-
-	starts uint64
 }
 
 // books keeps the account of one walker.
@@ -170,8 +170,13 @@ func (a account) close(ctx context.Context, w *walker) (Audit, error) {
 	if err != nil {
 		return Audit{}, err
 	}
+	return a.balance(w, s, counted)
+}
+
+// balance compares the account of a whole walk with what is known without it.
+func (a account) balance(w *walker, s series, counted *big.Int) (Audit, error) {
 	out := Audit{
-		Turns: a.Turns, Counted: counted.Uint64(), starts: s.starts, Base: s.base,
+		Turns: a.Turns, Counted: counted.Uint64(), Base: s.base,
 		Telescope: mul61(a.Num, inv61(a.Den)),
 		SumLo:     outward(s.lo, -1), SumHi: outward(s.hi, 1), Remainder: s.remainder.Text('e', 2),
 	}

@@ -70,7 +70,7 @@ func TestDistinctFindsAllCoincidences(t *testing.T) {
 		assert.True(t, slices.IsSortedFunc(r.Coincidences, func(a, b Coincidence) int { return a.Number.Cmp(b.Number) }))
 	}
 	for _, f := range tenFamilies() {
-		check(t, f, PowerOfTen(90))
+		check(t, f, PowerOfTen(60))
 	}
 	rapid.Check(t, func(t *rapid.T) {
 		f := families().Draw(t, "family")

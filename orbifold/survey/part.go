@@ -75,8 +75,9 @@ type partText[S any] struct {
 	Sums []sum[S] `json:"sums"`
 }
 
-// MarshalJSON writes an object with the fields format, version, name, region,
-// shards (their number) and sums (shard and sum, in the order of the shards).
+// MarshalJSON writes an object with the fields format, version, name, region, split
+// and shards (the number of shards asked for and made) and sums (shard and sum, in the
+// order of the shards).
 func (p Part[S]) MarshalJSON() ([]byte, error) {
 	if p.header.Format == "" {
 		return []byte("null"), nil
@@ -101,7 +102,7 @@ func (p *Part[S]) UnmarshalJSON(text []byte) error {
 	if err := t.known(); err != nil {
 		return err
 	}
-	shards, err := Split(t.Region, t.header.Shards)
+	shards, err := Split(t.Region, t.Split)
 	if err != nil {
 		return err
 	}

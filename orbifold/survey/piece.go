@@ -41,17 +41,24 @@ func (w *walker) pieces(n int) []piece {
 	top := piece{top: true}
 	var q pieceQueue
 	for i, c := range [...]farey.Class{farey.Infinity, farey.Zero, farey.One} {
+		if w.constraints.skip(edges[i].a.v.at, edges[i].b.v.at) {
+			continue
+		}
 		q = append(q, piece{path: farey.NewPath(c, contfrac.Word{}), edge: edges[i], load: w.load(edges[i]), inside: i})
 	}
 	if n < 4 {
 		// Three subtrees and the top are the least split; else there is one piece.
-		top.load = q[0].load + q[1].load + q[2].load
+		for _, p := range q {
+			top.load += p.load
+		}
 		top.whole = true
 		return []piece{top}
 	}
 	heap.Init(&q)
 	made := len(q)
-	for len(q) > 0 && len(q)+2 <= n && q[0].load > smallest {
+	// Where constraints cut off one side of each split, splitting makes no more pieces: no
+	// more than n splits.
+	for len(q) > 0 && len(q)+2 <= n && len(top.split) < n && q[0].load > smallest {
 		p := q[0]
 		top.split = append(top.split, p.edge)
 		front := w.scale.front(p.edge)
@@ -83,19 +90,30 @@ func word(l contfrac.Letter) contfrac.Word {
 // primitive vectors m·u + n·w, m, n ≥ 1, in a triangle or box, and 6/π² of all
 // vectors are primitive.
 func (w *walker) load(e edge) float64 {
-	x, y, limit := float64(e.a.v.lo), float64(e.b.v.lo), float64(w.most)
+	x, y, limit := float64(w.length(e.a)), float64(w.length(e.b)), float64(w.most)
 	if w.bound == nil {
 		x, y, limit = w.extent(e.a.v.at), w.extent(e.b.v.at), 1
 	}
 	if w.constraints.skip(e.a.v.at, e.b.v.at) {
 		return 0
 	}
-	rest := limit - x - y
-	if rest < 0 {
+	if limit-x-y < 0 {
 		return 0
 	}
-	// 3/π², and one for the slope in front.
+	// 3/π² of the square of what is left beside half a cell; one at least for the slope in front.
+	rest := limit - float64((x+y)/2)
 	return max(float64(0.303963550927013314*float64(rest*rest)/float64(x*y)), 1)
+}
+
+// length is f of an arc, by which the fan about it grows.
+func (s *scale) length(a *arc) int64 {
+	if a.n.BitLen() >= int(s.shift) {
+		return a.v.lo
+	}
+	if a.f == 0 {
+		a.f, _ = s.unit(a.n, s.family.Weight(a.v.at.class()))
+	}
+	return a.f
 }
 
 // extent is the size of a vector relative to the box.

@@ -23,11 +23,13 @@ const (
 // the base triangle to the first slope of a subtree, such as "infinity: L3 R".
 //
 // The text form of a shard, "5/64 infinity: L3 R", states its place, the number of
-// shards and the name, and is all that another machine needs beside the region.
+// shards that were asked for and the name, and is all that another machine needs beside
+// the region.
 type Shard struct {
 	region Region
 	index  int
-	of     int
+	of     int // shards asked for
+	made   int // shards there are
 	piece  piece
 }
 
@@ -53,7 +55,7 @@ func (w *walker) shards(r Region, n int) ([]Shard, error) {
 	pieces := w.pieces(n)
 	list := make([]Shard, len(pieces))
 	for i, p := range pieces {
-		list[i] = Shard{region: r, index: i, of: len(pieces), piece: p}
+		list[i] = Shard{region: r, index: i, of: n, made: len(pieces), piece: p}
 	}
 	return list, nil
 }
@@ -76,7 +78,7 @@ func ParseShard(r Region, text string) (Shard, error) {
 	if err != nil {
 		return Shard{}, err
 	}
-	if int(of) != len(shards) || shards[index-1].String() != text || shards[index-1].Name() != name {
+	if int(index) > len(shards) || shards[index-1].String() != text || shards[index-1].Name() != name {
 		return refuse(ErrMismatch)
 	}
 	return shards[index-1], nil
@@ -85,10 +87,10 @@ func ParseShard(r Region, text string) (Shard, error) {
 // Region returns the region that the shard is part of.
 func (s Shard) Region() Region { return s.region }
 
-// Index returns the place of the shard, 0 … Of − 1.
+// Index returns the place of the shard among those of its split, from 0.
 func (s Shard) Index() int { return s.index }
 
-// Of returns the number of shards of the region.
+// Of returns the number of shards that Split was asked for; it may have made fewer.
 func (s Shard) Of() int { return s.of }
 
 // Name returns "top" or the path to the first slope of the shard.
@@ -117,11 +119,12 @@ type header struct {
 	Version int    `json:"version"`
 	Name    string `json:"name"`
 	Region  Region `json:"region"`
-	Shards  int    `json:"shards"`
+	Split   int    `json:"split"`  // shards asked for
+	Shards  int    `json:"shards"` // shards there are
 }
 
-func newHeader(name string, r Region, shards int) header {
-	return header{Format, Version, name, r, shards}
+func newHeader(name string, s Shard) header {
+	return header{Format, Version, name, s.region, s.of, s.made}
 }
 
 // same refuses a header other than h.

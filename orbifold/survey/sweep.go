@@ -67,9 +67,9 @@ func SweepShards[S any](ctx context.Context, shards []Shard, q Question[S], o Op
 	if len(shards) == 0 || shards[0].of == 0 {
 		return Part[S]{}, fmt.Errorf("survey: sweep of no shards: want shards of Split: %w", ErrOptions)
 	}
-	want := newHeader(q.Name, shards[0].region, shards[0].of)
+	want := newHeader(q.Name, shards[0])
 	for _, s := range shards {
-		if err := want.same(newHeader(q.Name, s.region, s.of)); err != nil {
+		if err := want.same(newHeader(q.Name, s)); err != nil {
 			return Part[S]{}, err
 		}
 	}
@@ -97,7 +97,7 @@ func sweepWith[S any](ctx context.Context, w *walker, shards []Shard, q Question
 	if err != nil {
 		return Part[S]{}, err
 	}
-	whole := Part[S]{header: newHeader(q.Name, shards[0].region, shards[0].of)}
+	whole := Part[S]{header: newHeader(q.Name, shards[0])}
 	store := checkpoint{name: o.Checkpoint}
 	if text, err := store.read(); err != nil {
 		return Part[S]{}, err
