@@ -5,7 +5,6 @@ import (
 	"iter"
 	"math/big"
 	"slices"
-	"strings"
 
 	"example.com/onecusp/farey"
 	"example.com/onecusp/snake"
@@ -199,9 +198,7 @@ func turn(a, b, c [3]int) int {
 
 // String writes the expansion with the names x₀, x∞, x₁, largest monomial
 // first, for instance "x₀⁻¹·x∞² + x₀⁻¹·x₁²".
-func (x Expansion) String() string {
-	return written(x.Sum(), variables)
-}
+func (x Expansion) String() string { return x.Sum().Text(variables[:]...) }
 
 // Format writes the expansion whole for %s, and its first monomials and their
 // number for %v when there are many.
@@ -220,53 +217,10 @@ func (x Expansion) Format(s fmt.State, verb rune) {
 		m, _ := snake.NewLaurent(c, e...) // no more exponents than the sum had
 		head = head.Add(m)
 	}
-	fmt.Fprintf(s, "%s + … (%d monomials)", written(head, variables), sum.Len())
+	fmt.Fprintf(s, "%s + … (%d monomials)", head.Text(variables[:]...), sum.Len())
 }
 
 var variables = [3]string{"x₀", "x∞", "x₁"}
-
-// written writes a Laurent polynomial with names for its variables.
-func written(sum snake.Laurent, names [3]string) string {
-	var b strings.Builder
-	for e, coefficient := range sum.Terms() {
-		if b.Len() > 0 {
-			b.WriteString(" + ")
-		}
-		var factors []string
-		if coefficient.Cmp(unit) != 0 {
-			factors = append(factors, coefficient.String())
-		}
-		for c, k := range full(e) {
-			if k == 1 {
-				factors = append(factors, names[c])
-			} else if k != 0 {
-				factors = append(factors, names[c]+superscript(k))
-			}
-		}
-		if len(factors) == 0 {
-			factors = []string{"1"}
-		}
-		b.WriteString(strings.Join(factors, "·"))
-	}
-	if b.Len() == 0 {
-		return "0"
-	}
-	return b.String()
-}
-
-// superscript writes an exponent.
-func superscript(k int) string {
-	digits := []rune("⁰¹²³⁴⁵⁶⁷⁸⁹")
-	var b strings.Builder
-	for _, c := range fmt.Sprint(k) {
-		if c == '-' {
-			b.WriteRune('⁻')
-		} else {
-			b.WriteRune(digits[c-'0'])
-		}
-	}
-	return b.String()
-}
 
 // Monomials yields the perfect matchings of Snake(s), in their order, each with
 // the exponents of x₀, x∞, x₁ of its monomial in the Laurent expansion: the

@@ -276,9 +276,9 @@ func ExampleFPolynomial() {
 	s := farey.MustParse("1/3")
 	f, _ := orbifold.FPolynomial(s)
 	g, _ := orbifold.GVector(s)
-	fmt.Println(f, g)
+	fmt.Println(f.Text("y₀", "y∞", "y₁"), g)
 	// Output:
-	// x2^2*x3 + x2^2 + 2*x2 + 1 [0 -2 3]
+	// y∞²·y₁ + y∞² + 2·y∞ + 1 [0 -2 3]
 }
 
 func ExampleFamily_Monomials() {
@@ -295,19 +295,19 @@ func ExampleFamily_Monomials() {
 }
 
 func ExampleEval_symbolicWeights() {
-	// With variables for weights, Eval gives the number as a polynomial in
-	// x1 = k₀, x2 = k∞ and x3 = k₁.
+	// With variables for weights, Eval gives the number as a polynomial in k₀, k∞
+	// and k₁.
 	var k [3]snake.Laurent
 	for i := range k {
 		k[i], _ = snake.Variable(i + 1)
 	}
 	n, _ := orbifold.Eval(snake.Semiring[snake.Laurent](snake.Laurents{}), k, farey.MustParse("1/3"))
-	fmt.Println(n)
+	fmt.Println(n.Text("k₀", "k∞", "k₁"))
 	v, _ := n.Eval(big.NewRat(2, 1), new(big.Rat).SetInt64(1), big.NewRat(1, 1))
 	exact, _ := orbifold.MustNew(2, 1, 1).Number(farey.MustParse("1/3"))
 	fmt.Println(v.Num(), exact)
 	// Output:
-	// x2^2 + x2*x3 + 4*x2 + 2*x3 + 5
+	// k∞² + k∞·k₁ + 4·k∞ + 2·k₁ + 5
 	// 13 13
 }
 

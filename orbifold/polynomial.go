@@ -3,6 +3,7 @@ package orbifold
 import (
 	"fmt"
 	"math/big"
+	"strconv"
 	"strings"
 
 	"example.com/onecusp/contfrac"
@@ -324,4 +325,15 @@ func (s *sumText) String() string {
 		return "0"
 	}
 	return s.b.String()
+}
+
+// superscript writes an exponent.
+func superscript(k int) string {
+	digits := []rune("⁰¹²³⁴⁵⁶⁷⁸⁹")
+	return strings.Map(func(c rune) rune {
+		if c == '-' {
+			return '⁻'
+		}
+		return digits[c-'0']
+	}, strconv.Itoa(k))
 }

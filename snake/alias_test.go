@@ -118,6 +118,11 @@ func TestNothingIsAliased(t *testing.T) {
 		},
 		"Polynomial.Eval":     keeps(func(a *big.Int) { p.Eval(a) }),
 		"Laurent.Coefficient": twice(func() *big.Int { return l.Coefficient(1, 2) }),
+		"Laurent.Text": func(t *testing.T) {
+			names := []string{"a", "b"}
+			l.Text(names...)
+			require.Equal(t, []string{"a", "b"}, names)
+		},
 		"Laurent.Eval": func(t *testing.T) {
 			x := []*big.Rat{big.NewRat(2, 3), big.NewRat(5, 7)}
 			v, err := l.Eval(x...)

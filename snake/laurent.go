@@ -224,7 +224,53 @@ func ratPower(x *big.Rat, e int) *big.Rat {
 }
 
 // String writes the monomials, highest first: "x1^2*x2^-1 + 2*x2".
-func (p Laurent) String() string { return p.write((*big.Int).String, len(p.terms)) }
+func (p Laurent) String() string { return p.write((*big.Int).String, len(p.terms), ascii{}) }
+
+// Text writes the monomials for reading, highest first, with names for the
+// variables: "x₀²·x∞⁻¹ + 2·x∞" for the names "x₀", "x∞". Variables without a
+// name are called x1, x2, … as in String.
+func (p Laurent) Text(names ...string) string {
+	return p.write((*big.Int).String, len(p.terms), raised(names))
+}
+
+// notation writes a power of a variable, counted from 0, and the sign between factors.
+type notation interface {
+	power(variable, exponent int) string
+	times() string
+}
+
+type ascii struct{}
+
+func (ascii) times() string { return "*" }
+
+func (ascii) power(variable, exponent int) string {
+	if exponent == 1 {
+		return fmt.Sprintf("x%d", variable+1)
+	}
+	return fmt.Sprintf("x%d^%d", variable+1, exponent)
+}
+
+// raised holds names of variables and writes exponents as superscripts.
+type raised []string
+
+func (raised) times() string { return "·" }
+
+func (names raised) power(variable, exponent int) string {
+	name := fmt.Sprintf("x%d", variable+1)
+	if variable < len(names) {
+		name = names[variable]
+	}
+	if exponent == 1 {
+		return name
+	}
+	digits := []rune("⁰¹²³⁴⁵⁶⁷⁸⁹")
+	return name + strings.Map(func(c rune) rune {
+		if c == '-' {
+			return '⁻'
+		}
+		return digits[c-'0']
+	}, fmt.Sprint(exponent))
+}
 
 // Format implements fmt.Formatter: %s writes what String returns, %q quotes it,
 // %v and every other verb leave out middle terms of a long sum and shorten
@@ -234,11 +280,11 @@ func (p Laurent) Format(f fmt.State, verb rune) {
 		if as == "%s" {
 			return p.String()
 		}
-		return p.write(contfrac.Abbreviate, 6)
+		return p.write(contfrac.Abbreviate, 6, ascii{})
 	})
 }
 
-func (p Laurent) write(number func(*big.Int) string, keep int) string {
+func (p Laurent) write(number func(*big.Int) string, keep int, as notation) string {
 	var terms []signed
 	for i, t := range p.terms {
 		if len(p.terms) > 2*keep && i >= keep && i < len(p.terms)-keep {
@@ -249,17 +295,13 @@ func (p Laurent) write(number func(*big.Int) string, keep int) string {
 		}
 		var factors []string
 		for k, e := range t.exponents {
-			switch e {
-			case 0:
-			case 1:
-				factors = append(factors, fmt.Sprintf("x%d", k+1))
-			default:
-				factors = append(factors, fmt.Sprintf("x%d^%d", k+1, e))
+			if e != 0 {
+				factors = append(factors, as.power(k, e))
 			}
 		}
-		s := coefficient(t.c, strings.Join(factors, "*"), number)
+		s := coefficient(t.c, strings.Join(factors, as.times()), number)
 		if abs := new(big.Int).Abs(t.c); len(factors) > 0 && (!abs.IsInt64() || abs.Int64() != 1) {
-			s.text = number(abs) + "*" + strings.Join(factors, "*")
+			s.text = number(abs) + as.times() + strings.Join(factors, as.times())
 		}
 		terms = append(terms, s)
 	}

@@ -293,3 +293,13 @@ func TestLaurentRefuses(t *testing.T) {
 	_, err = least.Eval(big.NewRat(3, 2))
 	assert.ErrorIs(t, err, snake.ErrTooLarge)
 }
+
+func TestTextNamesTheVariables(t *testing.T) {
+	p, err := snake.NewLaurent(big.NewInt(-3), 2, -10, 1, 7)
+	require.NoError(t, err)
+	q, err := snake.NewLaurent(big.NewInt(1), 0, 1)
+	require.NoError(t, err)
+	assert.Equal(t, "-3·a²·b⁻¹⁰·x3·x4⁷ + b", p.Add(q).Text("a", "b"))
+	assert.Equal(t, "0", snake.Laurent{}.Text("a"))
+	assert.Equal(t, "1", snake.Laurents{}.One().Text())
+}

@@ -138,10 +138,7 @@ func (x *exhibit) addExpansion() error {
 	if err := errors.Join(err, errG); err != nil {
 		return err
 	}
-	x.Facts = append(x.Facts, fact{
-		Name: "F-polynomial", Note: "x1, x2, x3 stand for y₀, y∞, y₁",
-		Value: fmt.Sprintf("%v", p), Whole: p.String(),
-	})
+	x.state("F-polynomial", "%s", p.Text("y₀", "y∞", "y₁"))
 	x.state("g-vector", "%s", vector(g))
 	return nil
 }

@@ -37,7 +37,7 @@ func TestFactsOfThePublishedExpansion(t *testing.T) {
 	assert.Equal(t, "x₀²·x∞⁻¹ + x∞⁻¹·x₁²", x.fact("Laurent expansion"))
 	assert.Equal(t, "(0, 1, 0)", x.fact("Denominator vector"))
 	assert.Equal(t, "(0, −1, 2), (2, −1, 0)", x.fact("Newton polygon"))
-	assert.Equal(t, "x2 + 1", x.fact("F-polynomial"))
+	assert.Equal(t, "y∞ + 1", x.fact("F-polynomial"))
 	assert.Equal(t, "the empty word", x.fact("Word"))
 	assert.Equal(t, "1 + q", x.fact("Rank polynomial"))
 	assert.Empty(t, x.fact("no such fact"))
