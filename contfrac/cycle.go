@@ -6,20 +6,17 @@ import (
 	"sort"
 )
 
-// Cycle returns the conjugacy class of a hyperbolic matrix in SL(2, Z) as a
-// cyclic word: a word w with both letters whose matrix is g⁻¹·m·g for some g in
-// SL(2, Z), so that the trace is kept. Of the rotations of w the one of
-// LeastRotation is returned; two matrices are conjugate in SL(2, Z) exactly
-// when their cycles are equal. The run lengths are the period of the continued
-// fraction of the fixed points, twice if it is odd, and repeated when m is a power.
+// Cycle returns the conjugacy class of a hyperbolic matrix in SL(2, Z) as a cyclic word: a word w
+// with both letters whose matrix is g⁻¹·m·g for some g in SL(2, Z), so that the trace is kept. Of
+// the rotations of w the one of LeastRotation is returned; two matrices are conjugate in SL(2, Z)
+// exactly when their cycles are equal. The run lengths are the period of the continued fraction of
+// the fixed points, twice if it is odd, and repeated when m is a power.
 //
-// The determinant must be 1 (ErrDeterminant) and the trace at least 3
-// (ErrTrace): for a trace of at most −3 take the cycle of m.Neg(); other
-// matrices have no such word.
+// The determinant must be 1 (ErrDeterminant) and the trace at least 3 (ErrTrace): for a trace of
+// at most −3 take the cycle of m.Neg(); other matrices have no such word.
 //
-// It costs one expansion of a rational number of the size of the entries and
-// O(log r) products of the matrices of words of up to r runs, for r runs in the
-// expansion.
+// It costs one expansion of a rational number of the size of the entries and O(log r) products of
+// the matrices of words of up to r runs, for r runs in the expansion.
 func (m Matrix) Cycle() (Word, error) {
 	if err := m.checkHyperbolic(); err != nil {
 		return Word{}, fmt.Errorf("contfrac: cycle of a matrix: %w", err)
@@ -42,17 +39,17 @@ func (m Matrix) checkHyperbolic() error {
 	return nil
 }
 
-// positive returns a conjugate p = u⁻¹·m·u of a matrix of determinant 1 and
-// trace above 2, with det u = 1 and all entries of p positive.
+// positive returns a conjugate p = u⁻¹·m·u of a matrix of determinant 1 and trace above 2, with
+// det u = 1 and all entries of p positive.
 func (m Matrix) positive() (p, u Matrix) {
-	// The fixed points x of m, cx² + (d−a)x − b = 0, are irrational. An attracting
-	// one above 0 and a repelling one below 0 are all that it takes: then
-	// b, c > 0, hence ad = 1 + bc > 0. So 0 has to come between them.
+	// The fixed points x of m, cx² + (d−a)x − b = 0, are irrational. An attracting one above 0 and
+	// a repelling one below 0 are all that it takes: then b, c > 0, hence ad = 1 + bc > 0. So 0
+	// has to come between them.
 	p = m
 	if p.fixedSign() > 0 {
-		// They lie on one side of 0, and (a−d)/2c lies between them. Down the
-		// Stern–Brocot tree to it, the first run that one of them does not
-		// follow to its end parts them; behind it 0 comes between them.
+		// They lie on one side of 0, and (a−d)/2c lies between them. Down the Stern–Brocot tree to
+		// it, the first run that one of them does not follow to its end parts them; behind it 0
+		// comes between them.
 		e := m.entries()
 		num, den := new(big.Int).Sub(e.a, e.d), new(big.Int).Lsh(e.c, 1)
 		if den.Sign() < 0 {

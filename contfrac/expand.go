@@ -10,21 +10,21 @@ import (
 // expansion of a Surd is followed. The period of √D can have some √D terms.
 const MaxPeriod = 1 << 24
 
-// periodLimit is MaxPeriod, and packedLimit the bytes of the terms of an
-// expansion, except in tests.
+// periodLimit is MaxPeriod, and packedLimit the bytes of the terms of an expansion, except in
+// tests.
 var (
 	periodLimit = MaxPeriod
 	packedLimit = MaxBits / 8
 )
 
-// wordRootBits is the size of ⌊√D⌋ up to which a period is followed in machine
-// words. BenchmarkPeriod shows what that saves.
+// wordRootBits is the size of ⌊√D⌋ up to which a period is followed in machine words.
+// BenchmarkPeriod shows what that saves.
 var wordRootBits = 61
 
-// Periodic returns the continued fraction of x. An expansion of more than
-// MaxPeriod terms before it repeats, or of terms of more than MaxBits bits in all, gives ErrTooLarge.
-// It costs a few operations on integers of the size of D for each
-// term, and for D up to 122 bits some nanoseconds for each term of the period.
+// Periodic returns the continued fraction of x. An expansion of more than MaxPeriod terms before
+// it repeats, or of terms of more than MaxBits bits in all, gives ErrTooLarge. It costs a few
+// operations on integers of the size of D for each term, and for D up to 122 bits some nanoseconds
+// for each term of the period.
 func (x Surd) Periodic() (Periodic, error) { return x.PeriodicContext(context.Background()) }
 
 // PeriodicContext is Periodic that stops when ctx ends, with its error.
@@ -40,14 +40,14 @@ func (x Surd) PeriodicContext(ctx context.Context) (Periodic, error) {
 	return Periodic{pre: pre, period: period}, nil
 }
 
-// Lagrange returns the Lagrange value of x, the upper limit of 1/(q·|qx − p|)
-// over all fractions p/q, which depends on the period alone:
+// Lagrange returns the Lagrange value of x, the upper limit of 1/(q·|qx − p|) over all fractions
+// p/q, which depends on the period alone:
 //
 //	L = max over i of [bᵢ; bᵢ₊₁, …] + [0; bᵢ₋₁, bᵢ₋₂, …] = 2√D / min Q,
 //
-// the minimum over the complete quotients (P + √D)/Q in the period. It is exact;
-// Decimal and Enclosure have its value to any precision. Cost and errors are those of
-// Periodic. Source: "An Introduction to Diophantine Approximation", Cambridge 1957.
+// the minimum over the complete quotients (P + √D)/Q in the period. It is exact; Decimal and
+// Enclosure have its value to any precision. Cost and errors are those of Periodic. Source: "An
+// Introduction to Diophantine Approximation", Cambridge 1957.
 func (x Surd) Lagrange() (Surd, error) { return x.LagrangeContext(context.Background()) }
 
 // LagrangeContext is Lagrange that stops when ctx ends, with its error.
@@ -67,8 +67,8 @@ type quotients struct {
 	least       *big.Int // Q in the period
 }
 
-// run expands x until it repeats. A complete quotient is the first of the
-// period when it is reduced.
+// run expands x until it repeats. A complete quotient is the first of the period when it is
+// reduced.
 func (e *quotients) run(ctx context.Context, x Surd) error {
 	s := x.parts()
 	now := surd{p: new(big.Int).Set(s.p), d: s.d, q: new(big.Int).Set(s.q), root: s.root}
@@ -105,9 +105,8 @@ func (e *quotients) run(ctx context.Context, x Surd) error {
 	}
 }
 
-// step sets a to the next term and s to the next complete quotient, by
-// P' = aQ − P and Q' = Q₋ + a(P − P') with Q₋ the denominator before. It overwrites the
-// integers of s and before.
+// step sets a to the next term and s to the next complete quotient, by P' = aQ − P and Q' = Q₋ +
+// a(P − P') with Q₋ the denominator before. It overwrites the integers of s and before.
 func (s *surd) step(before, a *big.Int) {
 	a.Set(floorRoot(s.p, s.q, s.root))
 	next := Product(a, s.q)
@@ -118,8 +117,8 @@ func (s *surd) step(before, a *big.Int) {
 	*before, *s.q = *s.q, *before
 }
 
-// runWords is run for reduced quotients in machine words: 0 < P ≤ root and
-// 0 < Q ≤ 2·root, so that nothing overflows.
+// runWords is run for reduced quotients in machine words: 0 < P ≤ root and 0 < Q ≤ 2·root, so that
+// nothing overflows.
 func (e *quotients) runWords(ctx context.Context, p, q, root, before int64) error {
 	p0, q0, least := p, q, q
 	for {

@@ -9,9 +9,9 @@ import (
 //
 //	f(X, Y) = a·X² + b·XY + c·Y²
 //
-// with integers a, b, c whose discriminant b² − 4ac is positive and no square. It
-// need not be primitive. Forms are immutable; compare them with Equal. The zero value
-// is X² − XY − Y², whose first root is the golden ratio.
+// with integers a, b, c whose discriminant b² − 4ac is positive and no square. It need not be
+// primitive. Forms are immutable; compare them with Equal. The zero value is X² − XY − Y², whose
+// first root is the golden ratio.
 type Form struct {
 	e *form // nil for X² − XY − Y²
 }
@@ -21,8 +21,8 @@ type form struct{ a, b, c *big.Int }
 
 var goldenForm = form{big.NewInt(1), big.NewInt(-1), big.NewInt(-1)}
 
-// NewForm returns the form aX² + bXY + cY². A discriminant that is not positive or is a
-// square gives ErrDiscriminant, a nil coefficient ErrTerm.
+// NewForm returns the form aX² + bXY + cY². A discriminant that is not positive or is a square
+// gives ErrDiscriminant, a nil coefficient ErrTerm.
 func NewForm(a, b, c *big.Int) (Form, error) {
 	if a == nil || b == nil || c == nil {
 		return Form{}, fmt.Errorf("contfrac: form with a nil coefficient: three integers are accepted: %w", ErrTerm)
@@ -40,8 +40,7 @@ func FormOf(a, b, c int64) (Form, error) {
 	return NewForm(big.NewInt(a), big.NewInt(b), big.NewInt(c))
 }
 
-// Form returns the primitive form with x as its first root; its second root
-// is the conjugate of x.
+// Form returns the primitive form with x as its first root; its second root is the conjugate of x.
 func (x Surd) Form() Form {
 	e := x.parts()
 	f := &form{a: new(big.Int).Set(e.q), b: new(big.Int).Lsh(e.p, 1), c: e.cofactor()}
@@ -128,9 +127,8 @@ func orZero(n *big.Int) *big.Int {
 }
 
 // Apply returns the form f(pX + qY, rX + sY) for the matrix m = [[p, q], [r, s]], so that
-// f.Apply(m).Apply(n) is f.Apply(m.Mul(n)); the roots go by the inverse of m.
-// The discriminant is multiplied by the square of the determinant, of which 0 gives
-// ErrDeterminant.
+// f.Apply(m).Apply(n) is f.Apply(m.Mul(n)); the roots go by the inverse of m. The discriminant is
+// multiplied by the square of the determinant, of which 0 gives ErrDeterminant.
 func (f Form) Apply(m Matrix) (Form, error) {
 	if m.Det().Sign() == 0 {
 		return Form{}, fmt.Errorf("contfrac: %v of %v: a determinant other than 0 is accepted: %w", f, m, ErrDeterminant)
@@ -154,8 +152,8 @@ func (f Form) apply(m entries) Form {
 	return Form{e: &form{a: f.Eval(m.a, m.c), b: dot(u, m.b, v, m.d), c: f.Eval(m.b, m.d)}}
 }
 
-// Roots returns the roots x of f(x, 1) = 0: the first, (−b + √Δ)/2a for the
-// discriminant Δ, and the second, (−b − √Δ)/2a.
+// Roots returns the roots x of f(x, 1) = 0: the first, (−b + √Δ)/2a for the discriminant Δ, and
+// the second, (−b − √Δ)/2a.
 func (f Form) Roots() (first, second Surd) {
 	e := f.parts()
 	// (Q, −2P, −C) = (2a, 2b, 2c)
@@ -174,8 +172,8 @@ func (f Form) text(number func(*big.Int) string) string {
 	return "(" + number(e.a) + ", " + number(e.b) + ", " + number(e.c) + ")"
 }
 
-// Format implements fmt.Formatter: %s (and %q, quoted) writes the coefficients
-// in full and %v writes long ones shortened.
+// Format implements fmt.Formatter: %s (and %q, quoted) writes the coefficients in full and %v
+// writes long ones shortened.
 func (f Form) Format(s fmt.State, verb rune) {
 	format(s, verb, "contfrac.Form", f.String, func() string { return f.text(Abbreviate) })
 }

@@ -6,9 +6,9 @@ import (
 	"strings"
 )
 
-// ParseForm reads a form "(a, b, c)", as String writes it. Texts longer than
-// MaxText and integers of more than MaxDigits digits give ErrTooLarge, other forms
-// ErrSyntax; what the coefficients must be is said at NewForm.
+// ParseForm reads a form "(a, b, c)", as String writes it. Texts longer than MaxText and integers
+// of more than MaxDigits digits give ErrTooLarge, other forms ErrSyntax; what the coefficients
+// must be is said at NewForm.
 func ParseForm(s string) (Form, error) {
 	if err := checkText("form", len(s)); err != nil {
 		return Form{}, err
@@ -33,8 +33,8 @@ func ParseForm(s string) (Form, error) {
 // MarshalText implements encoding.TextMarshaler with the text of String.
 func (f Form) MarshalText() ([]byte, error) { return []byte(f.String()), nil }
 
-// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what
-// MarshalText writes, within MaxText and MaxDigits.
+// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what MarshalText writes,
+// within MaxText and MaxDigits.
 func (f *Form) UnmarshalText(text []byte) error {
 	g, err := ParseForm(string(text))
 	if err != nil {

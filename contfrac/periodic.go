@@ -11,11 +11,11 @@ import (
 //
 //	[a₀; a₁, …, (b₁, …, bₙ)] = [a₀; a₁, …, b₁, …, bₙ, b₁, …, bₙ, …],
 //
-// a₀ any integer and the other terms at least 1: the expansion of a quadratic
-// irrational, a [Surd]. The period and the terms before it are always the
-// shortest, so that the same number has one form, and Periodic values are equal
-// under == when they are the same number. They are immutable and take
-// about one byte for each small term. The zero value is [(1)], the golden ratio.
+// a₀ any integer and the other terms at least 1: the expansion of a quadratic irrational, a
+// [Surd]. The period and the terms before it are always the shortest, so that the same number has
+// one form, and Periodic values are equal under == when they are the same number. They are
+// immutable and take about one byte for each small term. The zero value is [(1)], the golden
+// ratio.
 type Periodic struct {
 	pre    Fraction
 	period Fraction // empty for [(1)]
@@ -24,9 +24,9 @@ type Periodic struct {
 // goldenPeriod is the period of the zero value.
 var goldenPeriod = Fraction{n: 1, data: "\x01"}
 
-// NewPeriodic returns the continued fraction with the terms of pre followed by
-// those of period again and again. The two need not be the shortest. An empty period,
-// or a term under 1 in it, gives ErrTerm.
+// NewPeriodic returns the continued fraction with the terms of pre followed by those of period
+// again and again. The two need not be the shortest. An empty period, or a term under 1 in it,
+// gives ErrTerm.
 func NewPeriodic(pre, period Fraction) (Periodic, error) {
 	if period.n == 0 || period.neg || period.data[0] == 0 {
 		return Periodic{}, fmt.Errorf("contfrac: period %v: one term or more, of at least 1, is accepted: %w", period, ErrTerm)
@@ -62,8 +62,8 @@ func shortest(pre, period Fraction) Periodic {
 
 // root returns the shortest f' of which f is a repetition.
 func (f Fraction) root() Fraction {
-	// The first place where f is found in ff after the start. A packed
-	// sequence ends where a number ends, so it starts where one does.
+	// The first place where f is found in ff after the start. A packed sequence ends where a
+	// number ends, so it starts where one does.
 	at := 1 + strings.Index((f.data + f.data)[1:], f.data)
 	if at == len(f.data) {
 		return f
@@ -83,8 +83,8 @@ func (x Periodic) Period() Fraction {
 	return x.period
 }
 
-// All yields the index and the value of every term, each value fresh. It does
-// not end, takes constant memory and can be run again.
+// All yields the index and the value of every term, each value fresh. It does not end, takes
+// constant memory and can be run again.
 func (x Periodic) All() iter.Seq2[int, *big.Int] {
 	return func(yield func(int, *big.Int) bool) {
 		for i, t := range x.pre.All() {
@@ -102,8 +102,7 @@ func (x Periodic) All() iter.Seq2[int, *big.Int] {
 	}
 }
 
-// Prefix returns the first n terms. An n below 0 gives ErrTerm, one above
-// MaxTerms ErrTooLarge.
+// Prefix returns the first n terms. An n below 0 gives ErrTerm, one above MaxTerms ErrTooLarge.
 func (x Periodic) Prefix(n int) (Fraction, error) {
 	if n < 0 {
 		return Fraction{}, fmt.Errorf("contfrac: the first %d terms: at least 0 are accepted: %w", n, ErrTerm)
@@ -124,20 +123,18 @@ func (x Periodic) Prefix(n int) (Fraction, error) {
 	return b.fraction(), nil
 }
 
-// Convergents yields numerator and denominator of [a₀], [a₀; a₁], … in order,
-// as fresh integers in lowest terms. It does not end and can be run again.
+// Convergents yields numerator and denominator of [a₀], [a₀; a₁], … in order, as fresh integers in
+// lowest terms. It does not end and can be run again.
 func (x Periodic) Convergents() iter.Seq2[*big.Int, *big.Int] { return convergents(x.All()) }
 
-// Equivalent reports whether x and y agree from some places on: whether
-// y = (ax + b)/(cx + d) for integers with ad − bc = ±1. It costs one search for the one
-// period in the other.
+// Equivalent reports whether x and y agree from some places on: whether y = (ax + b)/(cx + d) for
+// integers with ad − bc = ±1. It costs one search for the one period in the other.
 func (x Periodic) Equivalent(y Periodic) bool {
 	_, ok := x.offset(y)
 	return ok
 }
 
-// offset returns how many terms of the period of x come before that of y
-// begins in it.
+// offset returns how many terms of the period of x come before that of y begins in it.
 func (x Periodic) offset(y Periodic) (terms int, ok bool) {
 	f, g := x.Period(), y.Period()
 	if f.n != g.n || len(f.data) != len(g.data) {
@@ -153,8 +150,8 @@ func (x Periodic) offset(y Periodic) (terms int, ok bool) {
 	return terms, true
 }
 
-// Surd returns the number. It costs O(M(n) log n) for terms of n bits in all,
-// and a greatest common divisor of numbers of that size.
+// Surd returns the number. It costs O(M(n) log n) for terms of n bits in all, and a greatest
+// common divisor of numbers of that size.
 func (x Periodic) Surd() Surd {
 	// y = [(b₁, …)] is fixed by the product [[a, b], [c, d]] of the matrices [[bᵢ, 1], [1, 0]]:
 	// cy² + (d − a)y − b = 0.

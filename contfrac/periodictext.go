@@ -5,12 +5,11 @@ import (
 	"strings"
 )
 
-// ParsePeriodic reads a periodic continued fraction with its period in
-// brackets, "[9; (1, 2, 3)]", "[0; 4, (1)]", "[(2; 1)]": a semicolon comes after
-// the first term of all, and commas come after the others. White space is free between the
-// tokens, and neither part need be the shortest. Texts longer than MaxText and terms of more than MaxDigits
-// digits give ErrTooLarge, terms out of range ErrTerm, everything else
-// ErrSyntax.
+// ParsePeriodic reads a periodic continued fraction with its period in brackets, "[9; (1, 2, 3)]",
+// "[0; 4, (1)]", "[(2; 1)]": a semicolon comes after the first term of all, and commas come after
+// the others. White space is free between the tokens, and neither part need be the shortest. Texts
+// longer than MaxText and terms of more than MaxDigits digits give ErrTooLarge, terms out of range
+// ErrTerm, everything else ErrSyntax.
 func ParsePeriodic(s string) (Periodic, error) {
 	if err := checkText("periodic continued fraction", len(s)); err != nil {
 		return Periodic{}, err
@@ -58,8 +57,8 @@ func separatorAfter(i int) byte {
 	return ','
 }
 
-// String returns the text that ParsePeriodic reads, with the shortest period:
-// "[9; (1, 2, 3)]", "[0; 4, (1)]", "[(2; 1)]".
+// String returns the text that ParsePeriodic reads, with the shortest period: "[9; (1, 2, 3)]",
+// "[0; 4, (1)]", "[(2; 1)]".
 func (x Periodic) String() string {
 	return x.text(func(f Fraction) string { return f.String() })
 }
@@ -76,9 +75,8 @@ func (x Periodic) text(part func(Fraction) string) string {
 	return "[" + inner(x.pre) + string(separatorAfter(x.pre.n-1)) + " (" + strings.Replace(period, ";", ",", 1) + ")]"
 }
 
-// Format implements fmt.Formatter: %s (and %q, quoted) writes all the terms,
-// and %v writes the first and last ones of both parts when there are many, long
-// terms shortened.
+// Format implements fmt.Formatter: %s (and %q, quoted) writes all the terms, and %v writes the
+// first and last ones of both parts when there are many, long terms shortened.
 func (x Periodic) Format(s fmt.State, verb rune) {
 	format(s, verb, "contfrac.Periodic", x.String, func() string {
 		return x.text(func(f Fraction) string {
@@ -91,8 +89,8 @@ func (x Periodic) Format(s fmt.State, verb rune) {
 // MarshalText implements encoding.TextMarshaler with the text of String.
 func (x Periodic) MarshalText() ([]byte, error) { return []byte(x.String()), nil }
 
-// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what
-// MarshalText writes, within MaxText and MaxDigits: the shortest form only.
+// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what MarshalText writes,
+// within MaxText and MaxDigits: the shortest form only.
 func (x *Periodic) UnmarshalText(text []byte) error {
 	y, err := ParsePeriodic(string(text))
 	if err != nil {

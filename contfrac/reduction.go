@@ -7,8 +7,8 @@ import (
 	"math/big"
 )
 
-// IsReduced reports whether f is reduced: |√Δ − 2|a|| < b < √Δ for the
-// discriminant Δ. Then ac < 0, and one root lies between −1 and 1 and the other does not.
+// IsReduced reports whether f is reduced: |√Δ − 2|a|| < b < √Δ for the discriminant Δ. Then ac <
+// 0, and one root lies between −1 and 1 and the other does not.
 func (f Form) IsReduced() bool { return f.isReduced(new(big.Int).Sqrt(f.Discriminant())) }
 
 // isReduced is IsReduced, given ⌊√Δ⌋.
@@ -23,9 +23,8 @@ func (f Form) isReduced(root *big.Int) bool {
 	return a.CmpAbs(t) > 0 && a.CmpAbs(t.Add(root, e.b)) <= 0
 }
 
-// next returns the right neighbour (c, r, …) of f, with r ≡ −b modulo 2c and
-// |c| ≥ r > −|c|, or √Δ > r > √Δ − 2|c| when |c| < √Δ. It is f after the matrix
-// [[0, −1], [1, s]], s = (b + r)/2c.
+// next returns the right neighbour (c, r, …) of f, with r ≡ −b modulo 2c and |c| ≥ r > −|c|, or √Δ
+// > r > √Δ − 2|c| when |c| < √Δ. It is f after the matrix [[0, −1], [1, s]], s = (b + r)/2c.
 func (f Form) next(root *big.Int) (g Form, s *big.Int) {
 	e := f.parts()
 	top := new(big.Int).Abs(e.c)
@@ -48,10 +47,9 @@ func (f Form) next(root *big.Int) (g Form, s *big.Int) {
 	return Form{e: &form{e.c, r, t.Add(t, e.a)}}, s
 }
 
-// Reduced returns a reduced form g properly equivalent to f, and a matrix m of
-// determinant 1 with f.Apply(m) equal to g: f itself if it is reduced. It
-// costs up to about a step for each bit of the coefficients, of a few operations on
-// integers of their size.
+// Reduced returns a reduced form g properly equivalent to f, and a matrix m of determinant 1 with
+// f.Apply(m) equal to g: f itself if it is reduced. It costs up to about a step for each bit of
+// the coefficients, of a few operations on integers of their size.
 //
 // Source: "Disquisitiones Arithmeticae", 1801, art. 183.
 func (f Form) Reduced() (g Form, m Matrix) {
@@ -64,10 +62,10 @@ func (f Form) Reduced() (g Form, m Matrix) {
 	return f, m
 }
 
-// Cycle yields the reduced forms properly equivalent to f, each once, from
-// Reduced on, each after its left neighbour: (a, b, c) before (c, b', c') with b' ≡ −b
-// modulo 2c. Their first coefficients alternate in sign. The cycle can have some √Δ
-// members; the iterator holds one at a time and can be stopped and run again.
+// Cycle yields the reduced forms properly equivalent to f, each once, from Reduced on, each after
+// its left neighbour: (a, b, c) before (c, b', c') with b' ≡ −b modulo 2c. Their first
+// coefficients alternate in sign. The cycle can have some √Δ members; the iterator holds one at a
+// time and can be stopped and run again.
 func (f Form) Cycle() iter.Seq[Form] {
 	return func(yield func(Form) bool) {
 		first, _ := f.Reduced()
@@ -80,9 +78,8 @@ func (f Form) Cycle() iter.Seq[Form] {
 	}
 }
 
-// Minimum returns the least |f(x, y)| over integers x and y not both 0. It is
-// the least |a| in the cycle and at most √(Δ/5). Cost and errors are those of
-// Surd.Periodic for a root.
+// Minimum returns the least |f(x, y)| over integers x and y not both 0. It is the least |a| in the
+// cycle and at most √(Δ/5). Cost and errors are those of Surd.Periodic for a root.
 //
 // Source: "An Introduction to Diophantine Approximation", Cambridge 1957, ch. II.
 func (f Form) Minimum() (*big.Int, error) { return f.MinimumContext(context.Background()) }
@@ -94,16 +91,14 @@ func (f Form) MinimumContext(ctx context.Context) (*big.Int, error) {
 	if err := e.run(ctx, x); err != nil {
 		return nil, fmt.Errorf("contfrac: minimum of the form %v: %w", f, err)
 	}
-	// f is to the form Q·X² − 2P·XY − … of its root as its first
-	// coefficient is to Q.
+	// f is to the form Q·X² − 2P·XY − … of its root as its first coefficient is to Q.
 	n := Product(e.least, f.parts().a)
 	return n.Quo(n, x.parts().q), nil
 }
 
-// Automorph returns the matrix m of determinant 1 and least trace above 2 with
-// f.Apply(m) equal to f, in the direction in which the first root attracts. All matrices of
-// determinant 1 that keep f are the powers of m and their negatives. For the primitive form,
-// of discriminant Δ, it is
+// Automorph returns the matrix m of determinant 1 and least trace above 2 with f.Apply(m) equal to
+// f, in the direction in which the first root attracts. All matrices of determinant 1 that keep f
+// are the powers of m and their negatives. For the primitive form, of discriminant Δ, it is
 //
 //	[[(t − bu)/2, −cu], [au, (t + bu)/2]],   t² − Δu² = 4.
 //
@@ -134,9 +129,9 @@ func (f Form) AutomorphContext(ctx context.Context) (Matrix, error) {
 	return Matrix{e: &entries{a.Rsh(a, 1), c.Neg(c), Product(e.a, u), d.Rsh(d, 1)}}, nil
 }
 
-// Equivalent reports whether f and g are properly equivalent and, if so,
-// returns a matrix m of determinant 1 with f.Apply(m) equal to g. Cost and errors are
-// those of Surd.Periodic for roots of both.
+// Equivalent reports whether f and g are properly equivalent and, if so, returns a matrix m of
+// determinant 1 with f.Apply(m) equal to g. Cost and errors are those of Surd.Periodic for roots
+// of both.
 func (f Form) Equivalent(g Form) (m Matrix, ok bool, err error) {
 	return f.EquivalentContext(context.Background(), g)
 }
@@ -146,8 +141,8 @@ func (f Form) EquivalentContext(ctx context.Context, g Form) (m Matrix, ok bool,
 	if f.Discriminant().Cmp(g.Discriminant()) != 0 || f.Content().Cmp(g.Content()) != 0 {
 		return Matrix{}, false, nil
 	}
-	// A form is known by its first root, discriminant and content, so m
-	// has to take the first root of g to that of f.
+	// A form is known by its first root, discriminant and content, so m has to take the first root
+	// of g to that of f.
 	var tails [2]Periodic
 	for i, h := range []Form{f, g} {
 		x, _ := h.Roots()

@@ -1,19 +1,17 @@
 package contfrac
 
-// LeastRotation returns a normal form of the word read as a cycle: of its
-// rotations that start with R and end in L, the one whose run lengths come first in
-// lexicographic order. A word of one letter alone, or of none, is returned
-// as it is. Two words are rotations of each other exactly when their least
-// rotations are equal. It costs O(r) comparisons of run lengths for r runs, and
-// a machine word of memory a run.
+// LeastRotation returns a normal form of the word read as a cycle: of its rotations that start
+// with R and end in L, the one whose run lengths come first in lexicographic order. A word of one
+// letter alone, or of none, is returned as it is. Two words are rotations of each other exactly
+// when their least rotations are equal. It costs O(r) comparisons of run lengths for r runs, and a
+// machine word of memory a run.
 func (w Word) LeastRotation() Word {
 	if w.runs < 2 {
 		return w
 	}
 	w = w.fromRight()
-	// ends[i] is just past run i, and pair i is the runs 2i and 2i+1. Of the
-	// two candidates i < j that agree on k pairs, the greater one and the k
-	// starts after it are out.
+	// ends[i] is just past run i, and pair i is the runs 2i and 2i+1. Of the two candidates i < j
+	// that agree on k pairs, the greater one and the k starts after it are out.
 	ends := w.runEnds()
 	run := func(i int) string {
 		i %= w.runs
@@ -47,8 +45,7 @@ func (w Word) LeastRotation() Word {
 	return Word{first: R, runs: w.runs, data: w.data[at:] + w.data[:at]}
 }
 
-// fromRight returns a rotation of a word with both letters that starts with R
-// and ends in L.
+// fromRight returns a rotation of a word with both letters that starts with R and ends in L.
 func (w Word) fromRight() Word {
 	if w.first == L {
 		end := packedEnd(w.data, 0)

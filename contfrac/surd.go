@@ -9,11 +9,10 @@ import (
 //
 //	x = (P + √D)/Q,   D > 0 not a square, Q ≠ 0 of either sign, Q | D − P².
 //
-// The three integers are kept in lowest terms, gcd(P, Q, (D − P²)/Q) = 1, in
-// which every quadratic irrational is written in exactly one way. Then x is a root of the form
-// Q·X² − 2P·XY − ((D − P²)/Q)·Y², and (P − √D)/Q, its conjugate, is written
-// (−P + √D)/(−Q). Surds are immutable; compare them with Equal. The zero value
-// is the golden ratio (1 + √5)/2.
+// The three integers are kept in lowest terms, gcd(P, Q, (D − P²)/Q) = 1, in which every quadratic
+// irrational is written in exactly one way. Then x is a root of the form Q·X² − 2P·XY − ((D −
+// P²)/Q)·Y², and (P − √D)/Q, its conjugate, is written (−P + √D)/(−Q). Surds are immutable;
+// compare them with Equal. The zero value is the golden ratio (1 + √5)/2.
 type Surd struct {
 	e *surd // nil for the golden ratio
 }
@@ -26,9 +25,8 @@ type surd struct {
 
 var golden = surd{p: big.NewInt(1), d: big.NewInt(5), q: big.NewInt(2), root: big.NewInt(2)}
 
-// NewSurd returns (p + √d)/q in lowest terms; q need not divide d − p². A d
-// that is not positive or is a square gives ErrDiscriminant, q = 0 ErrInfinite
-// and nil ErrTerm.
+// NewSurd returns (p + √d)/q in lowest terms; q need not divide d − p². A d that is not positive
+// or is a square gives ErrDiscriminant, q = 0 ErrInfinite and nil ErrTerm.
 func NewSurd(p, d, q *big.Int) (Surd, error) {
 	if p == nil || d == nil || q == nil {
 		return Surd{}, fmt.Errorf("contfrac: surd with a nil integer: three integers are accepted: %w", ErrTerm)
@@ -82,8 +80,8 @@ func isSquare(n *big.Int) bool {
 	return Product(r, r).Cmp(n) == 0
 }
 
-// lowestSurd returns the surd of p, d and q with c = (d − p²)/q in lowest
-// terms. It keeps its arguments.
+// lowestSurd returns the surd of p, d and q with c = (d − p²)/q in lowest terms. It keeps its
+// arguments.
 func lowestSurd(p, d, q, c *big.Int) Surd {
 	g := new(big.Int).GCD(nil, nil, new(big.Int).Abs(p), new(big.Int).Abs(q))
 	g.GCD(nil, nil, g, new(big.Int).Abs(c))
@@ -124,8 +122,8 @@ func (x Surd) Conjugate() Surd {
 	return Surd{e: &surd{p: new(big.Int).Neg(e.p), d: e.d, q: new(big.Int).Neg(e.q), root: e.root}}
 }
 
-// Apply returns the image (ax + b)/(cx + d) under the matrix [[a, b], [c, d]].
-// A determinant 0 gives ErrDeterminant.
+// Apply returns the image (ax + b)/(cx + d) under the matrix [[a, b], [c, d]]. A determinant 0
+// gives ErrDeterminant.
 func (x Surd) Apply(m Matrix) (Surd, error) {
 	det := m.Det()
 	if det.Sign() == 0 {
@@ -136,9 +134,8 @@ func (x Surd) Apply(m Matrix) (Surd, error) {
 
 // apply is Apply for the determinant det ≠ 0.
 func (x Surd) apply(m entries, det *big.Int) Surd {
-	// With C = (D − P²)/Q, the image is (P' + det·√D)/Q' for
-	// P' = (ad + bc)P + bdQ − acC and Q' = 2cdP + d²Q − c²C, and
-	// (det²D − P'²)/Q' = −2abP − b²Q + a²C.
+	// With C = (D − P²)/Q, the image is (P' + det·√D)/Q' for P' = (ad + bc)P + bdQ − acC and Q' =
+	// 2cdP + d²Q − c²C, and (det²D − P'²)/Q' = −2abP − b²Q + a²C.
 	e := x.parts()
 	c0 := e.cofactor()
 	ac, bd, cd, ab := Product(m.a, m.c), Product(m.b, m.d), Product(m.c, m.d), Product(m.a, m.b)
@@ -174,8 +171,8 @@ func (x Surd) Sign() int {
 	return rootSign(e.p, oneInt, e.d) * e.q.Sign()
 }
 
-// Cmp returns −1, 0 or 1 as x is less than, equal to or greater than y. It is
-// exact, by a few multiplications.
+// Cmp returns −1, 0 or 1 as x is less than, equal to or greater than y. It is exact, by a few
+// multiplications.
 func (x Surd) Cmp(y Surd) int {
 	// The difference times |Q·Q'| is a + b√D + c√D'.
 	e, f := x.parts(), y.parts()
@@ -208,8 +205,7 @@ func (x Surd) Cmp(y Surd) int {
 	return 0
 }
 
-// CmpRat returns −1 or 1 as x is less or greater than the rational number r; a
-// nil r counts as 0.
+// CmpRat returns −1 or 1 as x is less or greater than the rational number r; a nil r counts as 0.
 func (x Surd) CmpRat(r *big.Rat) int {
 	if r == nil {
 		return x.Sign()
@@ -249,8 +245,8 @@ func floorRoot(p, q, root *big.Int) *big.Int {
 	return n.Not(n)
 }
 
-// IsReduced reports whether x > 1 and its conjugate lies between −1 and 0:
-// exactly then its continued fraction has no pre-period.
+// IsReduced reports whether x > 1 and its conjugate lies between −1 and 0: exactly then its
+// continued fraction has no pre-period.
 func (x Surd) IsReduced() bool { return x.parts().isReduced() }
 
 func (e *surd) isReduced() bool {

@@ -6,8 +6,8 @@ import (
 	"strings"
 )
 
-// String returns "(P + √D)/Q" with the integers in lowest terms, as in
-// "(1 + √5)/2", "(0 + √2)/1", "(-3 + √7)/-2".
+// String returns "(P + √D)/Q" with the integers in lowest terms, as in "(1 + √5)/2", "(0 + √2)/1",
+// "(-3 + √7)/-2".
 func (x Surd) String() string {
 	return x.text(func(n *big.Int) string { return n.String() })
 }
@@ -17,16 +17,15 @@ func (x Surd) text(number func(*big.Int) string) string {
 	return "(" + number(e.p) + " + √" + number(e.d) + ")/" + number(e.q)
 }
 
-// Format implements fmt.Formatter: %s (and %q, quoted) writes the integers in
-// full and %v writes long ones shortened.
+// Format implements fmt.Formatter: %s (and %q, quoted) writes the integers in full and %v writes
+// long ones shortened.
 func (x Surd) Format(f fmt.State, verb rune) {
 	format(f, verb, "contfrac.Surd", x.String, func() string { return x.text(Abbreviate) })
 }
 
-// ParseSurd reads a quadratic irrational in the form "(P + √D)/Q", not
-// necessarily in lowest terms. Texts longer than MaxText and integers of more
-// than MaxDigits digits give ErrTooLarge, other forms ErrSyntax; what the
-// integers must be is said at NewSurd.
+// ParseSurd reads a quadratic irrational in the form "(P + √D)/Q", not necessarily in lowest
+// terms. Texts longer than MaxText and integers of more than MaxDigits digits give ErrTooLarge,
+// other forms ErrSyntax; what the integers must be is said at NewSurd.
 func ParseSurd(s string) (Surd, error) {
 	if err := checkText("surd", len(s)); err != nil {
 		return Surd{}, err
@@ -50,8 +49,8 @@ func ParseSurd(s string) (Surd, error) {
 // MarshalText implements encoding.TextMarshaler with the text of String.
 func (x Surd) MarshalText() ([]byte, error) { return []byte(x.String()), nil }
 
-// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what
-// MarshalText writes, within MaxText and MaxDigits: lowest terms only.
+// UnmarshalText implements encoding.TextUnmarshaler. It accepts exactly what MarshalText writes,
+// within MaxText and MaxDigits: lowest terms only.
 func (x *Surd) UnmarshalText(text []byte) error {
 	y, err := ParseSurd(string(text))
 	if err != nil {

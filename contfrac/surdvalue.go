@@ -9,10 +9,9 @@ import (
 // MaxPrecision bounds the precision, in bits, of the enclosures of a Surd.
 const MaxPrecision = 1 << 22
 
-// Decimal returns x in decimal with the given number of digits after the
-// point, correctly rounded to the nearest; ties do not exist. Fewer than 0
-// digits give ErrTerm, more than MaxDigits ErrTooLarge. It costs one square root of
-// twice as many digits.
+// Decimal returns x in decimal with the given number of digits after the point, correctly rounded
+// to the nearest; ties do not exist. Fewer than 0 digits give ErrTerm, more than MaxDigits
+// ErrTooLarge. It costs one square root of twice as many digits.
 func (x Surd) Decimal(digits int) (string, error) {
 	if digits < 0 {
 		return "", fmt.Errorf("contfrac: decimal with %d digits: at least 0 are accepted: %w", digits, ErrTerm)
@@ -43,10 +42,9 @@ func (x Surd) Decimal(digits int) (string, error) {
 	return sign + s[:len(s)-digits] + "." + s[len(s)-digits:], nil
 }
 
-// Enclosure returns lo < x < hi with hi − lo ≤ 2^(1−prec)·|x|. The ends are
-// neighbours among the numbers of prec bits, 1 … MaxPrecision: 0 gives ErrTerm and
-// more ErrTooLarge. It costs one square root of about 2·prec bits, or
-// of the size of D.
+// Enclosure returns lo < x < hi with hi − lo ≤ 2^(1−prec)·|x|. The ends are neighbours among the
+// numbers of prec bits, 1 … MaxPrecision: 0 gives ErrTerm and more ErrTooLarge. It costs one
+// square root of about 2·prec bits, or of the size of D.
 func (x Surd) Enclosure(prec uint) (lo, hi *big.Float, err error) {
 	if prec == 0 {
 		return nil, nil, fmt.Errorf("contfrac: enclosure of 0 bits: 1 … %d are accepted: %w", MaxPrecision, ErrTerm)
@@ -107,9 +105,9 @@ func (x Surd) floorShifted(k int) *big.Int {
 	return floorRoot(new(big.Int).Lsh(e.p, uint(k)), e.q, root.Sqrt(root))
 }
 
-// ApproximationConstant returns q·|q·x − p|, which tells how well p/q approximates
-// x: the smaller the better for its size. It is below 1/√5 for infinitely many p/q, and the
-// lower limit over all of them is 1/L for the Lagrange value L of x. A q under 1, or nil, gives ErrTerm.
+// ApproximationConstant returns q·|q·x − p|, which tells how well p/q approximates x: the smaller
+// the better for its size. It is below 1/√5 for infinitely many p/q, and the lower limit over all
+// of them is 1/L for the Lagrange value L of x. A q under 1, or nil, gives ErrTerm.
 func (x Surd) ApproximationConstant(p, q *big.Int) (Surd, error) {
 	if p == nil || q == nil || q.Sign() <= 0 {
 		return Surd{}, fmt.Errorf("contfrac: approximation with denominator %s: at least 1 is accepted: %w", describe(q), ErrTerm)

@@ -9,19 +9,18 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// Cohn returns the Cohn matrix of the index t in [0, 1] with parameter a, any
-// integer:
+// Cohn returns the Cohn matrix of the index t in [0, 1] with parameter a, any integer:
 //
 //	C_{0/1} = [[a, 1], [3a−a²−1, 3−a]],   C_{1/1} = [[2a+1, 2], [−2a²+4a+2, 5−2a]],
 //
-// and at the mediant of two neighbours the product of their matrices, that of the
-// smaller index first. So it is the Christoffel word of the index (Christoffel) with C_{0/1} for x and C_{1/1}
-// for y. Its determinant is 1, its upper right entry the Markov number m_t and its trace 3·m_t. For
-// a = 2 it is the product of the matrices [[c, 1], [1, 0]] over the terms c of 1, 1 for x
-// and 2, 2 for y.
+// and at the mediant of two neighbours the product of their matrices, that of the smaller index
+// first. So it is the Christoffel word of the index (Christoffel) with C_{0/1} for x and C_{1/1}
+// for y. Its determinant is 1, its upper right entry the Markov number m_t and its trace 3·m_t.
+// For a = 2 it is the product of the matrices [[c, 1], [1, 0]] over the terms c of 1, 1 for x and
+// 2, 2 for y.
 //
-// An index outside [0, 1] is ErrIndex. When four times the bits of m_t pass orbifold.DefaultLimit, the
-// error is ErrTooLarge. Cost: that of some products of the size of m_t.
+// An index outside [0, 1] is ErrIndex. When four times the bits of m_t pass orbifold.DefaultLimit,
+// the error is ErrTooLarge. Cost: that of some products of the size of m_t.
 func Cohn(index farey.Slope, a int64) (contfrac.Matrix, error) {
 	if _, err := boundedBits(index, big.NewInt(4)); err != nil {
 		return contfrac.Matrix{}, fmt.Errorf("markov: Cohn matrix at index %v: %w", index, err)
@@ -65,8 +64,8 @@ func cohnBase(a int64) (zero, one contfrac.Matrix) {
 		contfrac.NewMatrix(n(0, 2, 1), big.NewInt(2), n(-2, 4, 2), n(0, -2, 5))
 }
 
-// boundedBits returns an upper bound on the bits of the number at an index; an
-// error if that many copies of it pass the limit.
+// boundedBits returns an upper bound on the bits of the number at an index; an error if that many
+// copies of it pass the limit.
 func boundedBits(index farey.Slope, copies *big.Int) (*big.Int, error) {
 	lattice, err := FromIndex(index)
 	if err != nil {

@@ -1,5 +1,6 @@
 // Package markov is the classical case under its classical names: Markov
-// numbers, Markov triples, the Frobenius index.
+// numbers, Markov triples, the Frobenius index, Cohn matrices, Markov forms and the
+// spectrum below 3.
 //
 // A Markov triple is a solution of
 //
@@ -8,9 +9,10 @@
 // in positive integers, and a Markov number is a member of one. They are the
 // family with weights (0,0,0) of package orbifold, which does all the work; here
 // are the names, the conversions between the labellings, and nothing that orbifold
-// does already. What is not here (residues, logarithms, comparison, words, snake
-// graphs, matrices, certificates, a limit on results, a context for Number) is had
-// from [Family] at a lattice slope.
+// does already. Forms and the spectrum are those of package orbifold/spectrum. What is
+// not here (residues, logarithms, comparison, words, snake graphs, matrices,
+// certificates, a limit on results, a context for Number) is had from [Family] at a
+// lattice slope.
 //
 // # Two labellings
 //
@@ -31,6 +33,9 @@
 //	lattice slope    0/1    1/2    1/3    1/4    2/5    1/5    3/7    2/7    3/8
 //	point (q, p)    (1,0)  (1,1)  (2,1)  (3,1)  (3,2)  (4,1)  (4,3)  (5,2)  (5,3)
 //	Markov number      1      2      5     13     29     34    169    194    433
+//
+// Forms, roots, words, Cohn matrices and values of the spectrum are called by the index.
+// [NumberAt] goes on to the points that are not primitive.
 //
 // # Uniqueness
 //

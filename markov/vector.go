@@ -8,18 +8,17 @@ import (
 	"example.com/onecusp/farey"
 )
 
-// NumberAt returns the number of the lattice point (q, p), 0 ≤ p ≤ q, primitive or
-// not. At a primitive point it is the Markov number m with index p/q; at its multiples it goes on
-// by
+// NumberAt returns the number of the lattice point (q, p), 0 ≤ p ≤ q, primitive or not. At a
+// primitive point it is the Markov number m with index p/q; at its multiples it goes on by
 //
 //	m_0 = 0,   m_{n+1} = 3m·m_n − m_{n−1},
 //
 // so that (0, 0) has 0. Another point, or a nil coordinate, is ErrIndex; a number of more than
-// about orbifold.DefaultLimit bits is ErrTooLarge. Cost: that of Frobenius and O(log n) products for the
-// n-th multiple.
+// about orbifold.DefaultLimit bits is ErrTooLarge. Cost: that of Frobenius and O(log n) products
+// for the n-th multiple.
 //
-// Source: "On the Markov numbers: fixed numerator, denominator, and sum conjectures", Adv.
-// Appl. Math. 130 (2021).
+// Source: "On the Markov numbers: fixed numerator, denominator, and sum conjectures", Adv. Appl.
+// Math. 130 (2021).
 func NumberAt(q, p *big.Int) (*big.Int, error) {
 	if q != nil && p != nil && q.Sign() == 0 && p.Sign() == 0 {
 		return new(big.Int), nil

@@ -9,8 +9,8 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// Approximation is a convergent p/q of a quadratic irrational x. The zero
-// value is 1/1 for the golden ratio.
+// Approximation is a convergent p/q of a quadratic irrational x. The zero value is 1/1 for the
+// golden ratio.
 type Approximation struct {
 	p, q *big.Int // nil for 1 and 1
 	x    contfrac.Surd
@@ -27,17 +27,17 @@ func (a Approximation) Fraction() (p, q *big.Int) {
 // Surd returns the irrational that is approximated.
 func (a Approximation) Surd() contfrac.Surd { return a.x }
 
-// Constant returns q·|q·x − p|, exact. It is below 1, and the lower limit over
-// the convergents, and over all fractions, is Value.Constant of the slope.
+// Constant returns q·|q·x − p|, exact. It is below 1, and the lower limit over the convergents,
+// and over all fractions, is Value.Constant of the slope.
 func (a Approximation) Constant() contfrac.Surd {
 	p, q := a.Fraction()
 	c, _ := a.x.ApproximationConstant(p, q) // q ≥ 1
 	return c
 }
 
-// Approximations yields the convergents of FixedPoint(f, s), in order. The
-// sequence does not end; the caller stops. It can be used again. Errors are those of
-// FixedPoint and contfrac.Surd.Periodic.
+// Approximations yields the convergents of FixedPoint(f, s), in order. The sequence does not end;
+// the caller stops. It can be used again. Errors are those of FixedPoint and
+// contfrac.Surd.Periodic.
 func Approximations(f orbifold.Family, s farey.Slope) (iter.Seq[Approximation], error) {
 	x, err := FixedPoint(f, s)
 	if err != nil {
@@ -46,8 +46,8 @@ func Approximations(f orbifold.Family, s farey.Slope) (iter.Seq[Approximation], 
 	return Convergents(x)
 }
 
-// Convergents yields the convergents of x in order. The sequence does not end;
-// the caller stops. It can be used again. Errors are those of contfrac.Surd.Periodic.
+// Convergents yields the convergents of x in order. The sequence does not end; the caller stops.
+// It can be used again. Errors are those of contfrac.Surd.Periodic.
 func Convergents(x contfrac.Surd) (iter.Seq[Approximation], error) {
 	expansion, err := x.Periodic()
 	if err != nil {

@@ -7,14 +7,14 @@ import (
 	"example.com/onecusp/farey"
 )
 
-// BelowThree returns the lattice slope in [0, 1/2] of a quadratic irrational
-// with Lagrange value below 3 from its continued fraction: the value is √(9 − 4/m²) for
-// the Markov number m at the slope. A value of 3 or more is ErrNotBelowThree.
+// BelowThree returns the lattice slope in [0, 1/2] of a quadratic irrational with Lagrange value
+// below 3 from its continued fraction: the value is √(9 − 4/m²) for the Markov number m at the
+// slope. A value of 3 or more is ErrNotBelowThree.
 //
-// The period is that of a Markov number exactly when it is, up to rotation, the Christoffel word of
-// some slope b/a with 1, 1 in place of x and 2, 2 in place of y: a pairs of ones and b pairs of
-// twos. So counting them gives the only candidate, with Frobenius index b/(a+b) and
-// lattice slope b/(a+2b); comparing the periods decides. It costs a few operations for each term. Numbers are
+// The period is that of a Markov number exactly when it is, up to rotation, the Christoffel word
+// of some slope b/a with 1, 1 in place of x and 2, 2 in place of y: a pairs of ones and b pairs of
+// twos. So counting them gives the only candidate, with Frobenius index b/(a+b) and lattice slope
+// b/(a+2b); comparing the periods decides. It costs a few operations for each term. Numbers are
 // not computed. Words of more than farey.MaxChristoffelLen pairs are ErrTooLarge.
 //
 // Source: "An Introduction to Diophantine Approximation", Cambridge 1957, ch. II.
@@ -53,9 +53,9 @@ func notBelowThree(x contfrac.Periodic) error {
 	return fmt.Errorf("spectrum: slope of %v: a period made of 1, 1 and 2, 2 in the order of a Christoffel word would be accepted: %w", x, ErrNotBelowThree)
 }
 
-// ChristoffelPeriod returns the periodic continued fraction that the
-// Christoffel word of a slope b/a ≥ 0 gives with 1, 1 for x and 2, 2 for y: that of the Markov number
-// with index b/(a+b), at the lattice slope b/(a+2b). Errors are those of farey.Slope.Christoffel.
+// ChristoffelPeriod returns the periodic continued fraction that the Christoffel word of a slope
+// b/a ≥ 0 gives with 1, 1 for x and 2, 2 for y: that of the Markov number with index b/(a+b), at
+// the lattice slope b/(a+2b). Errors are those of farey.Slope.Christoffel.
 func ChristoffelPeriod(s farey.Slope) (contfrac.Periodic, error) {
 	word, err := s.Christoffel()
 	if err != nil {

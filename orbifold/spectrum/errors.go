@@ -7,14 +7,13 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// Errors of this package. Every error returned wraps one of them, one of
-// package contfrac or the error of a context; test with errors.Is.
+// Errors of this package. Every error returned wraps one of them, one of package contfrac or the
+// error of a context; test with errors.Is.
 var (
-	// ErrTooLarge: numbers past the limit of the family, or a period past
-	// contfrac.MaxPeriod; the same error as orbifold's.
+	// ErrTooLarge: numbers past the limit of the family, or a period past contfrac.MaxPeriod; the
+	// same error as orbifold's.
 	ErrTooLarge = orbifold.ErrTooLarge
-	// ErrNotPositive: an integer that has to be at least 1; the same error as
-	// orbifold's.
+	// ErrNotPositive: an integer that has to be at least 1; the same error as orbifold's.
 	ErrNotPositive = orbifold.ErrNotPositive
 	// ErrNotRoot: N divides y² + k·y + 1 for no weight k of the family.
 	ErrNotRoot = errors.New("not a root of y² + k·y + 1")

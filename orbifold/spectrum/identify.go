@@ -12,22 +12,23 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// IdentifyRoot returns the slopes in Q ∪ {∞} with number n and root y modulo
-// n (Root), increasing, 1/0 last: at most three, one between each two base slopes; none
-// if there are none. For n = 1 they are the base slopes. It decides this for all weights,
-// without a search and without factoring n; see below.
+// IdentifyRoot returns the slopes in Q ∪ {∞} with number n and root y modulo n (Root), increasing,
+// 1/0 last: at most three, one between each two base slopes; none if there are none. For n = 1
+// they are the base slopes. It decides this for all weights, without a search and without
+// factoring n; see below.
 //
-// An n below 1 is ErrNotPositive. If n divides y² + k·y + 1 for no weight k of the family, or y
-// is nil, the error is ErrNotRoot. When ctx ends first, it is that of ctx; when matrices on the way
+// An n below 1 is ErrNotPositive. If n divides y² + k·y + 1 for no weight k of the family, or y is
+// nil, the error is ErrNotRoot. When ctx ends first, it is that of ctx; when matrices on the way
 // pass the limit of the family, ErrTooLarge.
 //
-// Why it is complete: let an arc with matrix [[y, N], [·, −k−y]] take up the interval
-// from −(y + k)/N to −y/N. For A·B·C = P the upper right entries of A·D = P·B⁻¹ and
-// D·B = A⁻¹·P, with D = B·C·B⁻¹, say that the interval of D begins N_B/(N_A·N_D) after that of A ends and
-// ends N_A/(N_B·N_D) before that of B begins. So the intervals lie apart and in the order of the slopes,
-// and those between two base slopes between two neighbouring integers. Hence −y/n modulo 1 leaves one
-// place in each of the three gaps, and at each triangle tells which side the arc lies on,
-// until its own interval ends there: the continued fraction of n/y followed down the Farey tree.
+// Why it is complete: let an arc with matrix [[y, N], [·, −k−y]] take up the interval from −(y +
+// k)/N to −y/N. For A·B·C = P the upper right entries of A·D = P·B⁻¹ and D·B = A⁻¹·P, with D =
+// B·C·B⁻¹, say that the interval of D begins N_B/(N_A·N_D) after that of A ends and ends
+// N_A/(N_B·N_D) before that of B begins. So the intervals lie apart and in the order of the
+// slopes, and those between two base slopes between two neighbouring integers. Hence −y/n modulo 1
+// leaves one place in each of the three gaps, and at each triangle tells which side the arc lies
+// on, until its own interval ends there: the continued fraction of n/y followed down the Farey
+// tree.
 //
 // Cost: O(log p + log q) steps, each a few calls of f.Matrix with numbers up to about n.
 func IdentifyRoot(ctx context.Context, f orbifold.Family, n, y *big.Int) ([]farey.Slope, error) {
@@ -75,9 +76,8 @@ func isRoot(f orbifold.Family, n, y *big.Int) bool {
 	return false
 }
 
-// placeOf returns −n times the upper left entry that a matrix with number n
-// and root y has between the base slopes of the path with the given first flip: n
-// times the end of the interval.
+// placeOf returns −n times the upper left entry that a matrix with number n and root y has between
+// the base slopes of the path with the given first flip: n times the end of the interval.
 func placeOf(f orbifold.Family, first farey.Class, n, y *big.Int) *big.Int {
 	offset := new(big.Int)
 	if first != farey.Infinity {
@@ -111,8 +111,7 @@ const (
 func (t target) at(ctx context.Context, s farey.Slope) (verdict, error) {
 	m, err := t.f.MatrixContext(ctx, s)
 	if err != nil {
-		// Numbers too large for the family may still be only the first that
-		// is larger than n.
+		// Numbers too large for the family may still be only the first that is larger than n.
 		if lo, _, e := t.f.Bits(s); errors.Is(err, ErrTooLarge) && e == nil && lo.Cmp(big.NewInt(int64(t.n.BitLen()))) > 0 {
 			return nowhere, nil
 		}
@@ -155,9 +154,8 @@ func (t target) descend(ctx context.Context, first farey.Class) (s farey.Slope, 
 	s = after(contfrac.L, 0)
 	v, err := t.at(ctx, s)
 	for err == nil && (v == below || v == above) {
-		// The run of turns to the same side is as long as the verdict is the
-		// same; lengths are doubled, so that no number has much more than twice the
-		// bits of n, and then halved.
+		// The run of turns to the same side is as long as the verdict is the same; lengths are
+		// doubled, so that no number has much more than twice the bits of n, and then halved.
 		l := contfrac.L
 		if v == above {
 			l = contfrac.R

@@ -10,13 +10,13 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// IdentifyForm returns the slopes s in Q ∪ {∞} whose form F_s (Form) is properly equivalent to
-// a positive multiple of g, increasing, 1/0 last; none if there are none. It decides this for all
-// weights.
+// IdentifyForm returns the slopes s in Q ∪ {∞} whose form F_s (Form) is properly equivalent to a
+// positive multiple of g, increasing, 1/0 last; none if there are none.
 //
-// The least value of g and its discriminant leave at most two numbers N for each
-// weight. Every way in which the form takes the value N, up to automorphs, is a member of its cycle,
-// with a root y modulo N, and IdentifyRoot has the slopes.
+// The least value of g and its discriminant leave at most two numbers N for each weight. Every way
+// in which the form takes the value N, up to automorphs, is a member of its cycle, with a root y
+// modulo N, and IdentifyRoot has the slopes. So each slope returned is proved, and the list is
+// complete if N is the least value of F_s: see Form on how far that is proved.
 //
 // Cost: that of going once round the cycle of g, and of IdentifyRoot. A cycle of more than
 // contfrac.MaxPeriod forms is ErrTooLarge; the other errors are those of ctx and IdentifyRoot.
@@ -28,12 +28,12 @@ func IdentifyForm(ctx context.Context, f orbifold.Family, g contfrac.Form) ([]fa
 	return found, nil
 }
 
-// IdentifySurd returns the slopes s in Q ∪ {∞} for which x is equivalent to a
-// root of the form F_s: their continued fractions agree from some places on. They are
-// increasing, 1/0 last; none if there are none. It decides this for all weights.
+// IdentifySurd returns the slopes s in Q ∪ {∞} for which x is equivalent to a root of the form
+// F_s: their continued fractions agree from some places on. They are increasing, 1/0 last; none if
+// there are none.
 //
-// They are the slopes of IdentifyForm for x.Form(), its negative, and the
-// mirror images of both under Y ↦ −Y. Cost and errors are those of IdentifyForm. For weights (0,0,0)
+// They are the slopes of IdentifyForm for x.Form(), its negative, and the mirror images of both
+// under Y ↦ −Y. What is proved, cost and errors are those of IdentifyForm. For weights (0,0,0)
 // BelowThree is quicker.
 func IdentifySurd(ctx context.Context, f orbifold.Family, x contfrac.Surd) ([]farey.Slope, error) {
 	g := x.Form()
@@ -80,8 +80,8 @@ func identifyForms(ctx context.Context, f orbifold.Family, forms ...contfrac.For
 	return found.sorted(), nil
 }
 
-// minima returns the least absolute value of a primitive form, and the middle
-// coefficients b of the members (a, b, c) of its cycle with that value as a.
+// minima returns the least absolute value of a primitive form, and the middle coefficients b of
+// the members (a, b, c) of its cycle with that value as a.
 func minima(ctx context.Context, g contfrac.Form) (least *big.Int, middles []*big.Int, err error) {
 	n := 0
 	for h := range g.Cycle() {
@@ -112,9 +112,8 @@ func ctxErr(ctx context.Context) error {
 	return ctx.Err()
 }
 
-// scales returns the integers g ≥ 1 by which a primitive form of discriminant d
-// and least value m is multiplied to be F_s for a slope of weight k: those with
-// g²d = (K·g·m − k)² − 4.
+// scales returns the integers g ≥ 1 by which a primitive form of discriminant d and least value m
+// is multiplied to be F_s for a slope of weight k: those with g²d = (K·g·m − k)² − 4.
 func scales(f orbifold.Family, k int64, d, m *big.Int) []*big.Int {
 	// (K²m² − d)·g² − 2Kmk·g + k² − 4 = 0
 	km := contfrac.Product(f.K(), m)

@@ -9,19 +9,20 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// Value is a Lagrange value √(t² − 4)/N, exact. For weights (0,0,0) it is a
-// point of the Lagrange and Markov spectra below 3. Values are immutable; compare them with
-// Cmp. The zero value is √5, that of the golden ratio.
+// Value is a Lagrange value √(t² − 4)/N, exact. For weights (0,0,0) it is a point of the Lagrange
+// and Markov spectra below 3. Values are immutable; compare them with Cmp. The zero value is √5,
+// that of the golden ratio.
 type Value struct {
 	t, n *big.Int // nil for 3 and 1
 }
 
-// LagrangeValue returns the Lagrange value of the slope s: √(t² − 4)/N for its
-// number N and trace t = K·N − k. It is the Lagrange value of both roots of
-// Form(f, s): the upper limit of 1/(q·|q·x − p|) over all fractions p/q.
+// LagrangeValue returns the Lagrange value of the slope s: √(t² − 4)/N for its number N and trace
+// t = K·N − k. It is the Lagrange value of both roots x of Form(f, s), the upper limit of
+// 1/(q·|q·x − p|) over all fractions p/q, as N is the least value of the form: see there how far
+// that is proved.
 //
-// Cost is that of f.Number. When four times the bits of N pass the limit of
-// the family, the error is ErrTooLarge.
+// Cost is that of f.Number. When four times the bits of N pass the limit of the family, the error
+// is ErrTooLarge.
 func LagrangeValue(f orbifold.Family, s farey.Slope) (Value, error) {
 	lo, _, err := f.Bits(s)
 	if err != nil {
@@ -70,8 +71,8 @@ func (v Value) Surd() contfrac.Surd {
 	return x
 }
 
-// Constant returns 1/L = N/√(t² − 4), the approximation constant: the lower
-// limit of q·|q·x − p| over all fractions p/q, for the irrationals x of the slope.
+// Constant returns 1/L = N/√(t² − 4), the approximation constant: the lower limit of q·|q·x − p|
+// over all fractions p/q, for the irrationals x of the slope.
 func (v Value) Constant() contfrac.Surd {
 	_, n := v.parts()
 	d := v.Radicand()
@@ -79,16 +80,16 @@ func (v Value) Constant() contfrac.Surd {
 	return x
 }
 
-// Decimal returns the value in decimal with the given number of digits after
-// the point, correctly rounded; limits and errors are those of contfrac.Surd.Decimal.
+// Decimal returns the value in decimal with the given number of digits after the point, correctly
+// rounded; limits and errors are those of contfrac.Surd.Decimal.
 func (v Value) Decimal(digits int) (string, error) { return v.Surd().Decimal(digits) }
 
-// Enclosure returns lo < L < hi, neighbours among the numbers of prec bits;
-// limits and errors are those of contfrac.Surd.Enclosure.
+// Enclosure returns lo < L < hi, neighbours among the numbers of prec bits; limits and errors are
+// those of contfrac.Surd.Enclosure.
 func (v Value) Enclosure(prec uint) (lo, hi *big.Float, err error) { return v.Surd().Enclosure(prec) }
 
-// Cmp returns −1, 0 or 1 as v is less than, equal to or greater than w. It is
-// exact, by a few multiplications.
+// Cmp returns −1, 0 or 1 as v is less than, equal to or greater than w. It is exact, by a few
+// multiplications.
 func (v Value) Cmp(w Value) int {
 	_, m := v.parts()
 	_, n := w.parts()
@@ -96,8 +97,7 @@ func (v Value) Cmp(w Value) int {
 	return contfrac.Product(v.Radicand(), square(n)).Cmp(contfrac.Product(w.Radicand(), square(m)))
 }
 
-// String returns "√(t²−4)/N" with the integers worked out, as "√221/5", and
-// "√5" when N is 1.
+// String returns "√(t²−4)/N" with the integers worked out, as "√221/5", and "√5" when N is 1.
 func (v Value) String() string { return v.text((*big.Int).String) }
 
 func (v Value) text(number func(*big.Int) string) string {
@@ -109,8 +109,8 @@ func (v Value) text(number func(*big.Int) string) string {
 	return s + "/" + number(n)
 }
 
-// Format implements fmt.Formatter: %s writes the integers whole and %v writes long
-// ones shortened; %q quotes the whole text.
+// Format implements fmt.Formatter: %s writes the integers whole and %v writes long ones shortened;
+// %q quotes the whole text.
 func (v Value) Format(s fmt.State, verb rune) {
 	switch verb {
 	case 's':
