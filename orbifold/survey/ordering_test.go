@@ -138,6 +138,25 @@ func TestFixedNumeratorDenominatorAndSum(t *testing.T) {
 	}
 }
 
+// With enclosures that decide nothing, exact numbers give the same trends.
+func TestNearTiesAreDecidedExactly(t *testing.T) {
+	for _, o := range []Ordering{{Index: true, Multiples: true, Num: 9, Den: 9}, {Family: orbifold.MustNew(3, 0, 0), Num: 5, Den: 6}} {
+		v, err := o.table(context.Background())
+		require.NoError(t, err)
+		for _, d := range Directions(3) {
+			want, err := v.along(context.Background(), d, 1000)
+			require.NoError(t, err)
+			wide := &values{Ordering: o, exact: make(map[farey.Point]*big.Int)}
+			for i := range v.lo {
+				wide.lo, wide.hi = append(wide.lo, v.lo[i]-1e6), append(wide.hi, v.hi[i]+1e6)
+			}
+			got, err := wide.along(context.Background(), d, 1000)
+			require.NoError(t, err)
+			require.Equal(t, want, got)
+		}
+	}
+}
+
 func TestOrderingRefuses(t *testing.T) {
 	ctx := context.Background()
 	one := []farey.Point{{X: 1, Y: 0}}

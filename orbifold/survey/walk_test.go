@@ -42,6 +42,7 @@ func TestWalkIsTheRegion(t *testing.T) {
 			require.True(t, ok, "slope %v", v.Slope())
 			delete(want, v.Slope().Key())
 			checkArc(t, v.Arc(), x.number)
+			assert.Equal(t, f, v.Family())
 			lo, hi := v.Log()
 			assert.Equal(t, [2]float64{v.Arc().LogLo, v.Arc().LogHi}, [2]float64{lo, hi})
 			assert.Equal(t, x.slope.Class(), v.Class())
