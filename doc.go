@@ -16,8 +16,12 @@
 //   - snake: snake and band graphs and their perfect matchings: count, list,
 //     rank, sample, weigh in any semiring, draw;
 //   - orbifold: the exchange family: numbers, residues, logarithms, triples, the
-//     tree, words, graphs, matrices, Laurent expansions, certificates,
+//     tree, fans, words, graphs, matrices, Laurent expansions, certificates,
 //     identification;
+//   - orbifold/spectrum: forms and Lagrange values, and the way back from them;
+//   - orbifold/recognize: integers and sequences back to families, slopes and
+//     recurrences;
+//   - orbifold/survey: sweeps over whole regions, with proof;
 //   - markov: the classical case under its classical names.
 //
 // The folder examples has whole programs; the first to try is examples/dossier.
