@@ -106,7 +106,7 @@ func quadratic() *rapid.Generator[contfrac.Form] {
 	})
 }
 
-// small draws forms with small coefficients.
+// smallForm draws forms with small coefficients.
 func smallForm() *rapid.Generator[contfrac.Form] {
 	return rapid.Custom(func(t *rapid.T) contfrac.Form {
 		for n := rapid.Int64Range(-12, 12); ; {
@@ -126,19 +126,11 @@ func real(x contfrac.Surd) *big.Float {
 	return v.Quo(v, float(x.Q()))
 }
 
-// near checks that two floats agree to a thousand bits or so.
+// near checks that two floats agree to some 500 bits.
 func near(t require.TestingT, want, got *big.Float) {
 	d := new(big.Float).Sub(want, got)
 	if d.Sign() == 0 {
 		return
 	}
 	require.Less(t, d.MantExp(nil), want.MantExp(nil)-500, "%g is not %g", got, want)
-}
-
-// short is a period that is followed with big integers as well as in words.
-func bothWordSizes(t interface{ Helper() }, test func()) {
-	t.Helper()
-	test()
-	defer contfrac.SetWordRootBits(contfrac.SetWordRootBits(0))
-	test()
 }

@@ -18,7 +18,7 @@ var (
 	// ErrNotRoot: N divides y² + k·y + 1 for no weight k of the family.
 	ErrNotRoot = errors.New("not a root of y² + k·y + 1")
 	// ErrNotBelowThree: the Lagrange value is 3 or more.
-	ErrNotBelowThree = errors.New("Lagrange value not below 3")
+	ErrNotBelowThree = errors.New("the Lagrange value is not below 3")
 )
 
 // short writes an integer for an error message.

