@@ -45,9 +45,11 @@ func (s Sequence) Recurrence(ctx context.Context) (Recurrence, error) {
 	for _, a := range s.terms {
 		bits = max(bits, a.BitLen())
 	}
-	best := n + 1 // the least length modulo a prime
-	var lifted lifting
-	tried, next := 0, 1
+	// Modulo a prime the length can be too small, when the prime divides a minor of
+	// the Hankel matrix, or too large, when it divides a denominator; nearly
+	// always it is right. So the primes are kept apart by length.
+	lifted := map[int]*lifting{}
+	tried, long := 0, 0
 	for p := range primes {
 		f := field{p}
 		c, err := f.shortest(ctx, f.reduce(s.terms))
@@ -55,28 +57,29 @@ func (s Sequence) Recurrence(ctx context.Context) (Recurrence, error) {
 			return Recurrence{}, fmt.Errorf("recognize: recurrence of %d terms: %w", n, err)
 		}
 		tried++
-		if length := len(c) - 1; length < best {
-			best, lifted, next = length, lifting{}, 1
-		} else if length > best {
-			continue
-		}
-		if 2*best >= n {
-			if tried == 3 {
+		length := len(c) - 1
+		if 2*length >= n {
+			if long++; long >= 3 && 2*long > tried {
 				break
 			}
 			continue
 		}
-		lifted.add(c, p)
-		if lifted.primes < next {
+		l := lifted[length]
+		if l == nil {
+			l = &lifting{next: 1}
+			lifted[length] = l
+		}
+		l.add(c, p)
+		if l.primes < l.next {
 			continue
 		}
-		next = lifted.primes + (lifted.primes+1)/2
-		if rule, ok := lifted.rule(s.terms); ok {
-			return Recurrence{Found, rule, n - 2*best}, nil
+		l.next = l.primes + (l.primes+1)/2
+		if rule, ok := l.rule(s.terms); ok {
+			return Recurrence{Found, rule, n - 2*length}, nil
 		}
 		// Coefficients are quotients of minors of the Hankel matrix, so this many
 		// primes would show them.
-		if lifted.primes > 3+(2*best*(bits+best))/60 {
+		if l.primes > 3+(2*length*(bits+length))/60 {
 			break
 		}
 	}
@@ -88,6 +91,7 @@ type lifting struct {
 	c       []*big.Int
 	modulus *big.Int
 	primes  int
+	next    int // the number of primes at which the rule is tried next
 }
 
 // add combines with the polynomial modulo one more prime.

@@ -96,7 +96,7 @@ func parseInteger(word string) (*big.Int, error) {
 	}
 	if digits == "" || strings.Trim(digits, "0123456789") != "" {
 		kind := ErrSyntax
-		if strings.Trim(word, "0123456789/.eE+-−") == "" && strings.ContainsFunc(word, unicode.IsDigit) {
+		if strings.Trim(word, "0123456789/.eE+-−") == "" && strings.ContainsAny(word, "/.eE") && strings.ContainsFunc(word, unicode.IsDigit) {
 			kind = ErrNotInteger
 		}
 		return nil, fmt.Errorf("recognize: term %q: want an integer in decimal digits: %w", clip(word), kind)
@@ -202,8 +202,8 @@ func ReadIndexed(r io.Reader) (Sequence, int64, error) {
 		if len(terms) == 0 {
 			first = index
 		}
-		if index-int64(len(terms)) != first {
-			return Sequence{}, 0, fmt.Errorf("recognize: line %d: index %d: want %d: %w", number+1, index, first+int64(len(terms)), ErrIndex)
+		if want := first + int64(len(terms)); index != want || want < first {
+			return Sequence{}, 0, fmt.Errorf("recognize: line %d: index %d: want one more than the line before: %w", number+1, index, ErrIndex)
 		}
 		a, err := parseInteger(words[1])
 		if err != nil {
