@@ -104,20 +104,22 @@ func (b *books) visit(v *Visit) {
 	}
 }
 
-// account is what books come to; accounts of parts of a walk add up.
-type account struct {
-	Num      uint64 `json:"num"`
-	Den      uint64 `json:"den"`
-	Turns    uint64 `json:"turns"`
-	Strictly uint64 `json:"strictly"`
+// Account is what the audit of a part of a walk keeps; accounts of parts add up.
+type Account struct {
+	// The sum of the terms k_r/N_r and N_c/(N_a·N_b), as a fraction modulo 2⁶¹ − 1.
+	Num uint64 `json:"num"`
+	Den uint64 `json:"den"`
+
+	Turns    uint64 `json:"turns"`    // edges where the walk turned back
+	Strictly uint64 `json:"strictly"` // slopes in front of an edge where it began
 	Digest   Digest `json:"digest"`
 }
 
-func (b *books) account() account {
-	return account{b.num, b.den, b.turns, b.strictly, b.digest}
+func (b *books) account() Account {
+	return Account{b.num, b.den, b.turns, b.strictly, b.digest}
 }
 
-func (a *account) merge(o account) {
+func (a *Account) merge(o Account) {
 	if a.Den == 0 && a.Turns == 0 && a.Digest.Slopes == 0 {
 		a.Den = 1
 	}
@@ -134,7 +136,9 @@ func (a *account) merge(o account) {
 // Check walks over all numbers of the family up to bound, one slope for each
 // symmetry class, and returns the account, with ErrAudit if it does not balance.
 func Check(ctx context.Context, f orbifold.Family, bound *big.Int, o Options) (Audit, Digest, error) {
-	q := Question[account]{Name: "audit", Merge: func(a *account, b account) { a.merge(b) }}
+	if bound == nil {
+		return Audit{}, Digest{}, fmt.Errorf("survey: audit up to nothing: want a bound of at least 1: %w", ErrBound)
+	}
 	r := Up(f, bound)
 	w, err := newWalker(r)
 	if err != nil {
@@ -144,15 +148,55 @@ func Check(ctx context.Context, f orbifold.Family, bound *big.Int, o Options) (A
 	if err != nil {
 		return Audit{}, Digest{}, err
 	}
-	part, err := sweepWith(ctx, w, shards, q, o, func(w *walker, sum *account) func() {
+	part, err := AuditShards(ctx, shards, o)
+	if err != nil {
+		return Audit{}, Digest{}, err
+	}
+	return Balance(ctx, part)
+}
+
+// accounts is the question of an audit; its visits are made by AuditShards.
+func accounts() Question[Account] {
+	return Question[Account]{Name: "audit", Merge: func(a *Account, b Account) { a.merge(b) }}
+}
+
+// AuditShards walks over some shards of one region and returns their accounts. The
+// region has to have a bound and no other constraint, one slope for each symmetry class
+// (ErrRegion), as regions of Up.
+func AuditShards(ctx context.Context, shards []Shard, o Options) (Part[Account], error) {
+	w, err := walkerOf("audit", shards)
+	if err != nil {
+		return Part[Account]{}, err
+	}
+	if err := plain(shards[0].region); err != nil {
+		return Part[Account]{}, err
+	}
+	return sweepWith(ctx, w, shards, accounts(), o, func(w *walker, sum *Account) func() {
 		b := w.keep()
 		w.sink = func(v *Visit) bool { b.visit(v); return true }
 		return func() { *sum = b.account() }
 	})
+}
+
+// plain refuses regions other than those of Up.
+func plain(r Region) error {
+	if r.Bound == nil || r.All || !newConstraints(r).anything {
+		return fmt.Errorf("survey: audit of %v: want a region with a bound alone: %w", r, ErrRegion)
+	}
+	return nil
+}
+
+// Balance balances the accounts of all shards of a region; ErrMismatch when one is missing,
+// ErrAudit if they do not balance.
+func Balance(ctx context.Context, part Part[Account]) (Audit, Digest, error) {
+	total, err := part.Result(accounts())
 	if err != nil {
 		return Audit{}, Digest{}, err
 	}
-	total, err := part.Result(q)
+	if err := plain(part.header.Region); err != nil {
+		return Audit{}, Digest{}, err
+	}
+	w, err := newWalker(part.header.Region)
 	if err != nil {
 		return Audit{}, Digest{}, err
 	}
@@ -161,7 +205,7 @@ func Check(ctx context.Context, f orbifold.Family, bound *big.Int, o Options) (A
 }
 
 // close balances the account of a whole walk.
-func (a account) close(ctx context.Context, w *walker) (Audit, error) {
+func (a Account) close(ctx context.Context, w *walker) (Audit, error) {
 	s, err := w.series(ctx)
 	if err != nil {
 		return Audit{}, err
@@ -174,7 +218,7 @@ func (a account) close(ctx context.Context, w *walker) (Audit, error) {
 }
 
 // balance compares the account of a whole walk with what is known without it.
-func (a account) balance(w *walker, s series, counted *big.Int) (Audit, error) {
+func (a Account) balance(w *walker, s series, counted *big.Int) (Audit, error) {
 	out := Audit{
 		Turns: a.Turns, Counted: counted.Uint64(), Base: s.base,
 		Telescope: mul61(a.Num, inv61(a.Den)),

@@ -12,7 +12,7 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// checkAudit asserts that an account balances.
+// checkAudit asserts that an Account balances.
 func checkAudit(t require.TestingT, a Audit, d Digest) {
 	require.Equal(t, a.Base, a.Telescope)
 	require.Equal(t, a.Counted, d.Slopes)
@@ -42,12 +42,12 @@ func TestAuditBalances(t *testing.T) {
 	}
 }
 
-// accounts walks over the pieces of a survey and returns the account of each.
-func accounts(t require.TestingT, f orbifold.Family, bound *big.Int, n int) ([]account, *walker) {
+// accountsOf walks over the pieces of a survey and returns the Account of each.
+func accountsOf(t require.TestingT, f orbifold.Family, bound *big.Int, n int) ([]Account, *walker) {
 	w, err := newWalker(Up(f, bound))
 	require.NoError(t, err)
 	pieces := w.pieces(n)
-	var list []account
+	var list []Account
 	for i := range pieces {
 		c := w.clone()
 		b := c.keep()
@@ -65,14 +65,14 @@ func TestPlantedBugsAreCaught(t *testing.T) {
 	for _, f := range tenFamilies() {
 		bound := PowerOfTen(60)
 		for _, n := range []int{4, 40, 200} {
-			list, w := accounts(t, f, bound, n)
+			list, w := accountsOf(t, f, bound, n)
 			s, err := w.series(context.Background())
 			require.NoError(t, err)
 			counted, err := Count(context.Background(), f, bound)
 			require.NoError(t, err)
 			// walk merges the accounts with some missing or doubled.
-			walk := func(times func(i int) int) (Audit, account, error) {
-				var total account
+			walk := func(times func(i int) int) (Audit, Account, error) {
+				var total Account
 				for i, a := range list {
 					for range times(i) {
 						total.merge(a)
@@ -133,18 +133,18 @@ func TestWrongResiduesAreCaught(t *testing.T) {
 	require.ErrorIs(t, err, ErrAudit)
 }
 
-// The account of a part that has no slopes changes nothing.
+// The Account of a part that has no slopes changes nothing.
 func TestEmptyAccountIsNeutral(t *testing.T) {
-	list, w := accounts(t, orbifold.MustNew(1, 2, 3), PowerOfTen(30), 1)
+	list, w := accountsOf(t, orbifold.MustNew(1, 2, 3), PowerOfTen(30), 1)
 	a := list[0]
 	b := a
-	b.merge(account{})
+	b.merge(Account{})
 	assert.Equal(t, a, b)
-	var c account
+	var c Account
 	c.merge(a)
 	assert.Equal(t, a, c)
-	for _, spoil := range []func(*account){
-		func(a *account) { a.Den = 0 }, func(a *account) { a.Turns++ }, func(a *account) { a.Digest.Slopes++ }, func(a *account) { a.Num ^= 1 },
+	for _, spoil := range []func(*Account){
+		func(a *Account) { a.Den = 0 }, func(a *Account) { a.Turns++ }, func(a *Account) { a.Digest.Slopes++ }, func(a *Account) { a.Num ^= 1 },
 	} {
 		b := a
 		spoil(&b)
@@ -160,6 +160,20 @@ func TestEmptyAccountIsNeutral(t *testing.T) {
 func TestCheckRefuses(t *testing.T) {
 	_, _, err := Check(context.Background(), orbifold.Family{}, nil, Options{})
 	require.Error(t, err)
+	_, _, err = Check(context.Background(), orbifold.Family{}, new(big.Int), Options{})
+	require.ErrorIs(t, err, ErrBound)
+	_, err = AuditShards(context.Background(), nil, Options{})
+	require.ErrorIs(t, err, ErrOptions)
+	shards, err := Split(Region{Bound: PowerOfTen(30), Box: &Box{9, 9}}, 2)
+	require.NoError(t, err)
+	_, err = AuditShards(context.Background(), shards, Options{})
+	require.ErrorIs(t, err, ErrRegion)
+	shards, err = Split(Up(orbifold.Family{}, PowerOfTen(30)), 20)
+	require.NoError(t, err)
+	part, err := AuditShards(context.Background(), shards[1:], Options{})
+	require.NoError(t, err)
+	_, _, err = Balance(context.Background(), part)
+	require.ErrorIs(t, err, ErrMismatch)
 	_, _, err = Check(context.Background(), orbifold.Family{}, big.NewInt(5), Options{Workers: -1})
 	require.ErrorIs(t, err, ErrOptions)
 }

@@ -84,7 +84,7 @@ type proofState struct {
 	Moduli   []string `json:"moduli"`
 	Next     int      `json:"next"`
 	Suspects []uint64 `json:"suspects"` // keys that occur more than once, increasing
-	Account  account  `json:"account"`
+	Account  Account  `json:"account"`
 }
 
 func newProofState(r Region) proofState {
@@ -195,10 +195,10 @@ func (d *proof) passes(ctx context.Context) error {
 // pass walks over everything, keeps the keys of one range and returns those that
 // occur more than once. The first pass keeps the books of the audit too; the others
 // the digest.
-func (d *proof) pass(ctx context.Context, space *keySpace) ([]uint64, account, error) {
+func (d *proof) pass(ctx context.Context, space *keySpace) ([]uint64, Account, error) {
 	space.begin(d.state.Next)
 	audit := d.state.Account.Digest.Slopes == 0
-	total, err := d.each(ctx, func(worker int, w *walker) func() account {
+	total, err := d.each(ctx, func(worker int, w *walker) func() Account {
 		s := space.workers[worker]
 		if audit {
 			b := w.keep()
@@ -210,19 +210,19 @@ func (d *proof) pass(ctx context.Context, space *keySpace) ([]uint64, account, e
 			return b.account
 		}
 		w.cut = nil
-		var a account
+		var a Account
 		w.sink = func(v *Visit) bool {
 			a.Digest.Add(v)
 			s.put(v.vertex().key())
 			return true
 		}
-		return func() account { return a }
+		return func() Account { return a }
 	})
 	if err != nil {
-		return nil, account{}, err
+		return nil, Account{}, err
 	}
 	if space.full.Load() {
-		return nil, account{}, fmt.Errorf("keys are not spread evenly: %w", ErrMemory)
+		return nil, Account{}, fmt.Errorf("keys are not spread evenly: %w", ErrMemory)
 	}
 	suspects, err := space.repeated(ctx)
 	return suspects, total, err
@@ -230,10 +230,10 @@ func (d *proof) pass(ctx context.Context, space *keySpace) ([]uint64, account, e
 
 // each walks over all shards in parallel; begin prepares a walker for a shard and
 // returns what gives its account at the end.
-func (d *proof) each(ctx context.Context, begin func(int, *walker) func() account) (account, error) {
+func (d *proof) each(ctx context.Context, begin func(int, *walker) func() Account) (Account, error) {
 	var (
 		mu    sync.Mutex
-		total account
+		total Account
 	)
 	err := pool(ctx, d.o.Workers, len(d.shards), func(worker, job int) error {
 		w := d.walkers[worker]
@@ -279,9 +279,9 @@ func (d *proof) settle(ctx context.Context) ([]Coincidence, int, error) {
 		mu   sync.Mutex
 		list []suspect
 	)
-	_, err := d.each(ctx, func(_ int, w *walker) func() account {
+	_, err := d.each(ctx, func(_ int, w *walker) func() Account {
 		w.cut = nil
-		var a account
+		var a Account
 		var mine []suspect
 		w.sink = func(v *Visit) bool {
 			a.Digest.Slopes++
@@ -292,7 +292,7 @@ func (d *proof) settle(ctx context.Context) ([]Coincidence, int, error) {
 			}
 			return true
 		}
-		return func() account {
+		return func() Account {
 			mu.Lock()
 			list = append(list, mine...)
 			mu.Unlock()
@@ -343,28 +343,46 @@ func (d *proof) split(ctx context.Context, list []suspect) ([]Coincidence, error
 		for n < len(list) && list[n].r64 == list[0].r64 && list[n].r61 == list[0].r61 {
 			n++
 		}
-		var here []Coincidence
-		for _, s := range list[:n] {
-			if n == 1 {
-				break
+		if n > 1 {
+			var slopes []farey.Slope
+			for _, s := range list[:n] {
+				slopes = append(slopes, s.slope)
 			}
-			number, err := d.walk.family.WithLimit(orbifold.DefaultLimit).NumberContext(ctx, s.slope)
+			here, err := Coincidences(ctx, d.walk.family, slopes)
 			if err != nil {
 				return nil, err
 			}
-			i := slices.IndexFunc(here, func(c Coincidence) bool { return c.Number.Cmp(number) == 0 })
-			if i < 0 {
-				here = append(here, Coincidence{Number: number})
-				i = len(here) - 1
-			}
-			here[i].Slopes = append(here[i].Slopes, s.slope)
-		}
-		for _, c := range here {
-			if len(c.Slopes) > 1 {
-				found = append(found, c)
-			}
+			found = append(found, here...)
 		}
 		list = list[n:]
 	}
 	return found, nil
+}
+
+// Coincidences computes the numbers at some slopes of a family and returns those that
+// two or more of the slopes carry, increasing, each with its slopes in increasing order.
+// The slopes are taken as inequivalent. Cost: that of the numbers.
+func Coincidences(ctx context.Context, f orbifold.Family, slopes []farey.Slope) ([]Coincidence, error) {
+	all := make(map[string]int, len(slopes))
+	var groups []Coincidence
+	for _, s := range slopes {
+		n, err := f.WithLimit(orbifold.DefaultLimit).NumberContext(ctx, s)
+		if err != nil {
+			return nil, fmt.Errorf("survey: coincidences: %w", err)
+		}
+		key := string(n.Bytes())
+		i, ok := all[key]
+		if !ok {
+			i = len(groups)
+			all[key] = i
+			groups = append(groups, Coincidence{Number: n})
+		}
+		groups[i].Slopes = append(groups[i].Slopes, s)
+	}
+	groups = slices.DeleteFunc(groups, func(c Coincidence) bool { return len(c.Slopes) < 2 })
+	for _, c := range groups {
+		slices.SortFunc(c.Slopes, farey.Slope.Cmp)
+	}
+	slices.SortFunc(groups, func(a, b Coincidence) int { return a.Number.Cmp(b.Number) })
+	return groups, nil
 }

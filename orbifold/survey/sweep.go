@@ -64,20 +64,25 @@ func sweep[S any](ctx context.Context, r Region, q Question[S], o Options) (Part
 // SweepShards asks the question of the slopes of some shards of one region and
 // split, and returns their part of the result.
 func SweepShards[S any](ctx context.Context, shards []Shard, q Question[S], o Options) (Part[S], error) {
-	if len(shards) == 0 || shards[0].of == 0 {
-		return Part[S]{}, fmt.Errorf("survey: sweep of no shards: want shards of Split: %w", ErrOptions)
-	}
-	want := newHeader(q.Name, shards[0])
-	for _, s := range shards {
-		if err := want.same(newHeader(q.Name, s)); err != nil {
-			return Part[S]{}, err
-		}
-	}
-	w, err := newWalker(shards[0].region)
+	w, err := walkerOf(q.Name, shards)
 	if err != nil {
 		return Part[S]{}, err
 	}
 	return sweepAll(ctx, w, shards, q, o)
+}
+
+// walkerOf returns a walker for shards, which have to belong together.
+func walkerOf(name string, shards []Shard) (*walker, error) {
+	if len(shards) == 0 || shards[0].of == 0 {
+		return nil, fmt.Errorf("survey: %s of no shards: want shards of Split: %w", clip(name), ErrOptions)
+	}
+	want := newHeader(name, shards[0])
+	for _, s := range shards {
+		if err := want.same(newHeader(name, s)); err != nil {
+			return nil, err
+		}
+	}
+	return newWalker(shards[0].region)
 }
 
 func sweepAll[S any](ctx context.Context, w *walker, shards []Shard, q Question[S], o Options) (Part[S], error) {

@@ -52,6 +52,10 @@ func (v *Visit) Mod64() uint64 { return v.vertex().r64 }
 // Mod61 returns the number at the slope modulo the prime 2⁶¹ − 1.
 func (v *Visit) Mod61() uint64 { return v.vertex().r61 }
 
+// Key returns 64 bits made of both residues: equal numbers have equal keys, and
+// distinct keys prove numbers distinct.
+func (v *Visit) Key() uint64 { return v.vertex().key() }
+
 // Log returns an enclosure of the natural logarithm of the number at the slope.
 // Its relative width is below 2⁻⁴⁰ for bounds up to 10^100000.
 func (v *Visit) Log() (lo, hi float64) { return v.walk.scale.nats(v.vertex().lo, v.vertex().hi) }
