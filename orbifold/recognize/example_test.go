@@ -35,7 +35,7 @@ func ExampleSequence_Fans_progression() {
 		fmt.Println(m.Fan, "step", m.Step)
 	}
 	// Output:
-	// fan of (0,0,0) about 1/2 through 4/7 step -2
+	// fan of (0,0,0) about 1/2 through 4/9 step -2
 }
 
 func ExampleSequence_Fans_undecided() {
@@ -80,7 +80,7 @@ func ExampleFamilies() {
 	}
 	// Output:
 	// (1,1,1) 3 of 3 [[1/2] [1/3] [2/5]] true
-	// (1,1,0) 2 of 3 [[2/1] [3/1] []] false
+	// (1,0,0) 2 of 3 [[2/1] [1/4] []] false
 }
 
 func ExampleWeights() {
