@@ -22,7 +22,7 @@ const (
 
 // Tuning of the buckets, by BenchmarkKeys; tests set other values.
 var (
-	bucketKeys = 1 << 16 // a bucket has at most that many keys on average, so that it stays in a cache
+	bucketKeys = 1 << 17 // a bucket has at most that many keys on average, so that it stays in a cache
 	maxBuckets = 1 << 14 // of one pass; with more of them the stages leave the cache
 )
 
