@@ -4,6 +4,7 @@ import (
 	"context"
 	"fmt"
 	"math/big"
+	"strings"
 
 	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
@@ -56,6 +57,38 @@ func (c Count) Value() (*big.Int, bool) {
 
 // Residues returns the residues; none unless Method is ModuloPrimes.
 func (c Count) Residues() []Residue { return append([]Residue(nil), c.residues...) }
+
+// String returns the exact value, the residues as "5 modulo 61, …", or "not
+// run".
+func (c Count) String() string {
+	if c.Method == Exact && c.value != nil {
+		return c.value.String()
+	}
+	return c.brief()
+}
+
+// Format writes the value whole for %s and shortened for %v.
+func (c Count) Format(s fmt.State, verb rune) {
+	if verb == 'v' {
+		fmt.Fprint(s, c.brief())
+		return
+	}
+	fmt.Fprint(s, c.String())
+}
+
+func (c Count) brief() string {
+	switch {
+	case c.Method == Exact && c.value != nil:
+		return contfrac.Abbreviate(c.value)
+	case c.Method != ModuloPrimes || len(c.residues) == 0:
+		return string(NotRun)
+	}
+	var parts []string
+	for _, r := range c.residues {
+		parts = append(parts, fmt.Sprintf("%d modulo %d", r.Value, r.Prime))
+	}
+	return strings.Join(parts, ", ")
+}
 
 // Agrees tells whether the route ran and found n, exactly or modulo each prime.
 func (c Count) Agrees(n *big.Int) bool {
@@ -254,6 +287,24 @@ func (c Certificate) claimed() *claims {
 		return &claims{number: new(big.Int), tiles: new(big.Int), root: new(big.Int), trace: new(big.Int)}
 	}
 	return c.c
+}
+
+// String says what is certified, "961 at 3/7 in family (2,0,1)"; MarshalJSON
+// writes all of it. The zero value is "nothing".
+func (c Certificate) String() string {
+	if c.c == nil {
+		return "nothing"
+	}
+	return fmt.Sprintf("%s at %s in family %s", c.c.number, c.c.slope, c.c.family)
+}
+
+// Format writes the text of String whole for %s and shortened for %v.
+func (c Certificate) Format(s fmt.State, verb rune) {
+	if verb == 'v' && c.c != nil {
+		fmt.Fprintf(s, "%s at %v in family %s", contfrac.Abbreviate(c.c.number), c.c.slope, c.c.family)
+		return
+	}
+	fmt.Fprint(s, c.String())
 }
 
 // Family returns the family.

@@ -261,6 +261,45 @@ func TestDecoderRefusesWhatItWouldNotWrite(t *testing.T) {
 	}
 }
 
+func TestDecoderRefusesUnknownMethods(t *testing.T) {
+	text := string(must(json.Marshal(must(orbifold.MustNew(2, 0, 1).Certify(farey.MustParse("3/7")))(t)))(t))
+	for _, change := range [][2]string{
+		{`{"method":"exact","value":"961"}`, `{"method":"guessed","value":"961"}`},
+		{`{"method":"exact","value":"961"}`, `{"method":"exact"}`},
+		{`{"method":"exact","value":"961"}`, `{"method":"not run","value":"961"}`},
+		{`{"method":"exact","value":"961"}`, `{"method":"modulo primes"}`},
+		{`{"method":"exact","value":"961"}`, `{"method":"exact","value":"961","residues":[{"prime":"7","residue":"2"}]}`},
+	} {
+		changed := strings.Replace(text, change[0], change[1], 1)
+		require.NotEqual(t, text, changed)
+		var c orbifold.Certificate
+		assert.ErrorIs(t, json.Unmarshal([]byte(changed), &c), orbifold.ErrCertificate, change[1])
+	}
+}
+
+func TestCertificatesPrintWholeAndShortened(t *testing.T) {
+	c := must(orbifold.MustNew(2, 0, 1).Certify(farey.MustParse("3/7")))(t)
+	assert.Equal(t, "961 at 3/7 in family (2,0,1)", fmt.Sprintf("%v", c))
+	assert.Equal(t, "961", fmt.Sprintf("%v", c.Continuant()))
+	assert.Equal(t, "nothing", fmt.Sprint(orbifold.Certificate{}))
+	assert.Equal(t, "not run", fmt.Sprint(orbifold.Count{}))
+
+	long := must(orbifold.Family{}.Certify(farey.MustParse("1/300")))(t)
+	n := long.Number()
+	assert.Equal(t, n.String()+" at 1/300 in family (0,0,0)", fmt.Sprintf("%s", long))
+	assert.Equal(t, contfrac.Abbreviate(n)+" at 1/300 in family (0,0,0)", fmt.Sprintf("%v", long))
+	assert.Equal(t, n.String(), fmt.Sprintf("%s", long.Matchings()))
+	assert.Equal(t, contfrac.Abbreviate(n), fmt.Sprintf("%v", long.Matchings()))
+	for node := range (orbifold.Family{}).Tree(299) {
+		if node.Slope().Equal(long.Slope()) {
+			assert.Equal(t, "1/300: "+n.String(), fmt.Sprintf("%s", node))
+			assert.Equal(t, "1/300: "+contfrac.Abbreviate(n), fmt.Sprintf("%v", node))
+			break
+		}
+	}
+	assert.Equal(t, "0/1: 1", fmt.Sprint(orbifold.Node{}))
+}
+
 func TestLongRoutesRunModuloPrimesAndSaySo(t *testing.T) {
 	f := orbifold.Family{}
 	s := farey.MustParse("1/150000") // 299,997 letters: past the exact tiles and runs
@@ -268,6 +307,7 @@ func TestLongRoutesRunModuloPrimesAndSaySo(t *testing.T) {
 	for _, count := range []orbifold.Count{c.Continuant(), c.Matchings()} {
 		assert.Equal(t, orbifold.ModuloPrimes, count.Method)
 		assert.Len(t, count.Residues(), 3)
+		assert.Equal(t, 3, strings.Count(fmt.Sprint(count), " modulo "))
 		assert.True(t, count.Agrees(c.Number()))
 		assert.False(t, count.Agrees(new(big.Int).Add(c.Number(), big.NewInt(1))))
 		_, ok := count.Value()

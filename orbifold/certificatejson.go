@@ -136,7 +136,7 @@ func (c Certificate) MarshalJSON() ([]byte, error) {
 
 // UnmarshalJSON reads what MarshalJSON writes, up to white space, and refuses
 // everything else: unknown, missing, repeated or reordered fields, integers with
-// leading zeros, other formats and versions, texts past MaxCertificateBytes. The error
+// leading zeros, unknown methods, other formats and versions, texts past MaxCertificateBytes. The error
 // wraps ErrCertificate. Whether the claims are true is for Verify to say.
 func (c *Certificate) UnmarshalJSON(text []byte) error {
 	refuse := func(format string, args ...any) error {
@@ -253,6 +253,14 @@ func (r *wireReader) integer(field, text string) *big.Int {
 
 func (r *wireReader) count(field string, w wireCount) Count {
 	c := Count{Method: w.Method}
+	switch w.Method {
+	case Exact, ModuloPrimes, NotRun:
+	default:
+		r.keep(field, fmt.Errorf("method %q: want %q, %q or %q", clip(string(w.Method)), Exact, ModuloPrimes, NotRun))
+	}
+	if (w.Value != "") != (w.Method == Exact) || (len(w.Residues) > 0) != (w.Method == ModuloPrimes) {
+		r.keep(field, fmt.Errorf("a value goes with %q, residues with %q", Exact, ModuloPrimes))
+	}
 	if w.Value != "" {
 		c.value = r.integer(field, w.Value)
 	}

@@ -6,6 +6,7 @@ import (
 	"math/big"
 	"slices"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/snake"
 )
@@ -51,7 +52,7 @@ func (f Family) Laurent(s farey.Slope) (Expansion, error) {
 // expandable returns the snake graph of s when it is short enough.
 func (f Family) expandable(s farey.Slope, what string) (snake.Graph, error) {
 	if n := f.Tiles(s); n.Cmp(big.NewInt(MaxExpandedTiles)) > 0 {
-		return snake.Graph{}, fmt.Errorf("orbifold: %s of %v in family %v: %s tiles, at most %d are expanded: %w", what, s, f, brief(n), MaxExpandedTiles, ErrTooLarge)
+		return snake.Graph{}, fmt.Errorf("orbifold: %s of %v in family %v: %s tiles, at most %d are expanded: %w", what, s, f, contfrac.Abbreviate(n), MaxExpandedTiles, ErrTooLarge)
 	}
 	return f.Snake(s)
 }

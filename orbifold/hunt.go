@@ -22,15 +22,16 @@ import (
 // t ≥ 3·N_A: only slopes A with N_A up to the square root of the window's end
 // are visited, a quarter of all.
 //
-// Logarithms are integers in units of u = 2^−shift. Numbers below 2⁵³ are
-// exact, and the logarithm of one is off by at most 2⁻⁴⁶ and rounding to u.
-// Above, the logarithm of a number comes from those of its parents by
+// Logarithms are integers in units of u = 2^−shift. A number is exact when
+// K·N_a·N_b < 2⁵³ for its parents a and b, and its logarithm is off by at most
+// 2⁻⁴⁶ and rounding to u. Else its logarithm comes from those of its parents by
 // ln N_r = ln K + ln N_a + ln N_b + ln f, f = 1 − k_a/(K·N_a) − k_b/(K·N_b) − N_c/(K·N_a·N_b),
-// where a number from 2⁵³ on drops out of f. As f ≥ 2/K and its float64 value
-// is off by less than 2⁻⁴⁹, a flip adds an error of at most
-// e = 3u + 2⁻⁴⁶ + K·2⁻⁴⁸ to those of the parents, so the logarithm of r is off by less
-// than (|p| + q)·e. Slopes in the window widened by that are candidates; which of
-// them count is decided by exact means.
+// where a number that is not exact drops out of f. Such a number is at least
+// 2⁵⁴/K, as f ≥ 2/K; and as K·f ≥ 2 + k_b·(1 − 1/N_b), what drops out is at most
+// K·2⁻⁵² of f. The float64 value of f is off by less than 2⁻⁴⁹. So a flip adds an
+// error of at most e = 3u + 2⁻⁴⁶ + K·2⁻⁴⁸ to those of the parents, and the
+// logarithm of r is off by less than (|p| + q)·e. Slopes in the window widened by
+// that are candidates; which of them count is decided by exact means.
 type hunt struct {
 	f      Family
 	shift  uint
@@ -46,7 +47,7 @@ type hunt struct {
 // huntK is the K up to which float64 is precise enough for a hunt.
 const huntK = 1 << 40
 
-// exactBelow bounds the numbers that a hunt holds exactly.
+// exactBelow bounds K·N_a·N_b for the numbers that a hunt holds exactly.
 const exactBelow = 1 << 53
 
 // prey is a vertex: its number when that is exact, else 0; its logarithm; its
@@ -206,9 +207,10 @@ func (w *worker) walk(e trail) {
 	}
 }
 
-// deep does what walk does, for an edge both of whose numbers are past 2⁵³: all
-// f are 1 from here on, and the logarithms on a side of a fan are an arithmetic
-// progression.
+// deep does what walk does, for an edge with no exact number: all f are 1 from
+// here on, and the logarithms on a side of a fan are an arithmetic progression.
+// It calls itself for the edge with the larger numbers of the two in front, so
+// that it is as deep as the logarithm of the window and no deeper.
 func (w *worker) deep(la, lb, pa, qa, pb, qb int64) {
 	for w.goOn() {
 		h := w.hunt
@@ -219,8 +221,13 @@ func (w *worker) deep(la, lb, pa, qa, pb, qb int64) {
 		d := h.logK + l
 		w.along(la+d, d, pa+p, qa+q, p, q)
 		w.along(lb+d, d, pb+p, qb+q, p, q)
-		w.deep(la, l, pa, qa, p, q)
-		la, pa, qa = l, p, q
+		if la < lb {
+			w.deep(l, lb, p, q, pb, qb)
+			lb, pb, qb = l, p, q
+		} else {
+			w.deep(la, l, pa, qa, p, q)
+			la, pa, qa = l, p, q
+		}
 	}
 }
 
@@ -243,7 +250,9 @@ func (w *worker) along(l, d, p, q, dp, dq int64) {
 }
 
 // visit takes the vertex in front of an edge for A, looks along the two sides of
-// its fan, and pushes the two edges behind it.
+// its fan, and pushes the two edges behind it, that with the larger numbers
+// last: its part of the tree is much the smaller one, so a stack taken from the
+// end stays short.
 func (h *hunt) visit(stack []trail, e *trail, found func(farey.Slope)) []trail {
 	if !e.inside {
 		if e.inside = h.f.within(e); !e.inside && !h.f.touches(e) {
@@ -258,6 +267,9 @@ func (h *hunt) visit(stack []trail, e *trail, found func(farey.Slope)) []trail {
 	right := trail{v, e.b, e.a, f, e.inside}
 	h.side(&left, v, e.a, found)
 	h.side(&right, v, e.b, found)
+	if e.a.log < e.b.log {
+		return append(stack, left, right)
+	}
 	return append(stack, right, left)
 }
 

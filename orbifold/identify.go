@@ -5,6 +5,7 @@ import (
 	"context"
 	"errors"
 	"fmt"
+	"math"
 	"math/big"
 	"slices"
 	"sync"
@@ -124,9 +125,10 @@ func (f Family) Nearest(ctx context.Context, n *big.Int, k int) (below, above []
 		return nil, nil, nil
 	}
 	center := logInt(n, 80, 128)
-	// About G·X slopes lie in a window of width 1/2 about X, for a constant of the order of 1.
+	// About G·X² slopes lie below X, for a constant of the order of 1, so that
+	// either width is enough for some k of them above the center.
 	x, _ := center.hi.Float64()
-	for width := float64(k+1) / (x + 1); ; width *= 2 {
+	for width := min(float64(k+1)/(x+1), math.Sqrt(float64(k+1))); ; width *= 2 {
 		w := big.NewFloat(width)
 		lo, hi := down(128).Sub(center.lo, w), up(128).Add(center.hi, w)
 		slopes, err := f.between(ctx, lo, hi)
@@ -134,19 +136,21 @@ func (f Family) Nearest(ctx context.Context, n *big.Int, k int) (below, above []
 			return nil, nil, wrap(err)
 		}
 		below, above = nil, nil
+		decided := true
 		for _, s := range slopes {
-			c, in, err := f.side(ctx, s, n, span{lo, hi})
+			c, in, out, err := f.side(ctx, s, n, span{lo, hi})
 			switch {
 			case err != nil:
 				return nil, nil, wrap(err)
 			case !in:
+				decided = decided && out
 			case c < 0:
 				below = append(below, s)
 			case c > 0:
 				above = append(above, s)
 			}
 		}
-		if (len(below) >= k || lo.Sign() < 0) && len(above) >= k {
+		if decided && (len(below) >= k || lo.Sign() < 0) && len(above) >= k {
 			break
 		}
 	}
@@ -168,24 +172,25 @@ func (f Family) Nearest(ctx context.Context, n *big.Int, k int) (below, above []
 	return below[:min(k, len(below))], above[:min(k, len(above))], nil
 }
 
-// side compares the number at s with n; in is false when its logarithm is not
-// certainly in the window, so that others like it may be missing.
-func (f Family) side(ctx context.Context, s farey.Slope, n *big.Int, window span) (c int, in bool, err error) {
+// side compares the number at s with n. It tells whether the logarithm of the
+// number is certainly in the window or certainly out of it.
+func (f Family) side(ctx context.Context, s farey.Slope, n *big.Int, window span) (c int, in, out bool, err error) {
 	l, err := f.logSpan(ctx, s, 96)
 	if err != nil {
-		return 0, false, err
+		return 0, false, false, err
 	}
 	in = l.lo.Cmp(window.lo) >= 0 && l.hi.Cmp(window.hi) <= 0
+	out = l.hi.Cmp(window.lo) < 0 || l.lo.Cmp(window.hi) > 0
 	at := logInt(n, 80, 128)
 	switch {
 	case l.hi.Cmp(at.lo) < 0:
-		return -1, in, nil
+		return -1, in, out, nil
 	case l.lo.Cmp(at.hi) > 0:
-		return 1, in, nil
+		return 1, in, out, nil
 	}
 	x, err := f.WithLimit(int64(n.BitLen())+64).NumberContext(ctx, s)
 	if err != nil {
-		return 0, false, err
+		return 0, false, false, err
 	}
-	return x.Cmp(n), in, nil
+	return x.Cmp(n), in, out, nil
 }

@@ -110,7 +110,7 @@ func (f Family) fits(ctx context.Context, s farey.Slope, copies int64) error {
 		what = fmt.Sprintf("a result of %d such numbers", copies)
 	}
 	return fmt.Errorf("orbifold: number at %v in family %v: about %s bits; %s may have %d bits (WithLimit sets it): %w",
-		s, f, brief(bits), what, f.Limit(), ErrTooLarge)
+		s, f, contfrac.Abbreviate(bits), what, f.Limit(), ErrTooLarge)
 }
 
 // logSpan encloses the logarithm of the number at s.

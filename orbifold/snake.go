@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math/big"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/snake"
 )
@@ -38,7 +39,7 @@ func (f Family) Snake(s farey.Slope) (snake.Graph, error) {
 	}
 	if n := f.Tiles(s); n.Cmp(big.NewInt(snake.MaxTiles)) > 0 {
 		return snake.Graph{}, fmt.Errorf("orbifold: snake graph of %v in family %v: %s tiles, at most %d are glued (Word has the run form): %w",
-			s, f, brief(n), snake.MaxTiles, ErrTooLarge)
+			s, f, contfrac.Abbreviate(n), snake.MaxTiles, ErrTooLarge)
 	}
 	crossings, err := corridor(s)
 	if err != nil {

@@ -2,6 +2,7 @@ package orbifold
 
 import (
 	"container/heap"
+	"fmt"
 	"iter"
 	"math/big"
 
@@ -51,6 +52,18 @@ func (n Node) Triple() Triple {
 	t.numbers[n.edge.b.class] = n.edge.b.number
 	t.numbers[n.edge.c.class] = n.number
 	return t
+}
+
+// String returns the slope and its number, "3/7: 169".
+func (n Node) String() string { return fmt.Sprintf("%s: %s", n.slope, n.value()) }
+
+// Format writes both whole for %s and shortened for %v.
+func (n Node) Format(s fmt.State, verb rune) {
+	if verb == 'v' {
+		fmt.Fprintf(s, "%v: %s", n.slope, contfrac.Abbreviate(n.value()))
+		return
+	}
+	fmt.Fprint(s, n.String())
 }
 
 // branch is an edge of the tree and all that lies in front of it.

@@ -314,6 +314,28 @@ func TestNearestIsTheNeighbourhoodInTheSortedWalk(t *testing.T) {
 	}
 }
 
+// TestNearestToSmallNumbersIsAscending asks for many more numbers than there are
+// below.
+func TestNearestToSmallNumbersIsAscending(t *testing.T) {
+	for _, f := range []orbifold.Family{{}, orbifold.MustNew(2, 0, 1), orbifold.MustNew(0, 1<<50, 0)} {
+		const k = 300
+		below, above, err := f.Nearest(context.Background(), big.NewInt(1), k)
+		require.NoError(t, err)
+		assert.Empty(t, below)
+		require.Len(t, above, k)
+		i := 0
+		for n := range f.Ascending() {
+			if n.Number().IsInt64() && n.Number().Int64() == 1 {
+				continue
+			}
+			require.True(t, n.Slope().Equal(above[i]), "%v: place %d: %v, want %v", f, i, above[i], n)
+			if i++; i == k {
+				break
+			}
+		}
+	}
+}
+
 func TestInequivalentSlopesWithEqualNumbers(t *testing.T) {
 	// Found by exhaustive search with a slow model: (3,0,0) has 5 at 2, −1/2 and
 	// 1/3; (2,0,1) has 81 at 2/5 and 4/3, 4489 at −4/3 and 6/7.

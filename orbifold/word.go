@@ -68,7 +68,7 @@ func corridor(s farey.Slope) (iter.Seq[farey.Crossing], error) {
 		total.Add(total, n)
 	}
 	if total.Cmp(big.NewInt(MaxCrossings)) > 0 {
-		return nil, fmt.Errorf("orbifold: corridor of %v: %s crossings, at most %d are walked: %w", s, brief(total), MaxCrossings, ErrTooLarge)
+		return nil, fmt.Errorf("orbifold: corridor of %v: %s crossings, at most %d are walked: %w", s, contfrac.Abbreviate(total), MaxCrossings, ErrTooLarge)
 	}
 	return s.Crossings()
 }
