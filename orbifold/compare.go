@@ -38,11 +38,8 @@ func (f Family) CompareContext(ctx context.Context, s, t farey.Slope) (int, erro
 		if err != nil {
 			return 0, err
 		}
-		switch {
-		case a.hi.Cmp(b.lo) < 0:
-			return -1, nil
-		case b.hi.Cmp(a.lo) < 0:
-			return 1, nil
+		if c := a.apart(b); c != 0 {
+			return c, nil
 		}
 		if prec == 64 && f.agree(s, t) {
 			return f.compareExact(ctx, s, t)

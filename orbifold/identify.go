@@ -135,62 +135,73 @@ func (f Family) Nearest(ctx context.Context, n *big.Int, k int) (below, above []
 		if err != nil {
 			return nil, nil, wrap(err)
 		}
-		below, above = nil, nil
+		var under, over []sighting
 		decided := true
 		for _, s := range slopes {
-			c, in, out, err := f.side(ctx, s, n, span{lo, hi})
+			x, err := f.sight(ctx, s, n, span{lo, hi})
 			switch {
 			case err != nil:
 				return nil, nil, wrap(err)
-			case !in:
-				decided = decided && out
-			case c < 0:
-				below = append(below, s)
-			case c > 0:
-				above = append(above, s)
+			case !x.in:
+				decided = decided && x.out
+			case x.sign < 0:
+				under = append(under, x)
+			case x.sign > 0:
+				over = append(over, x)
 			}
 		}
-		if decided && (len(below) >= k || lo.Sign() < 0) && len(above) >= k {
-			break
+		if !decided || len(under) < k && lo.Sign() >= 0 || len(over) < k {
+			continue
 		}
-	}
-	var failed error
-	order := func(sign int) func(s, t farey.Slope) int {
-		return func(s, t farey.Slope) int {
-			c, err := f.CompareContext(ctx, s, t)
-			if err != nil && failed == nil {
-				failed = err
-			}
-			return cmp.Or(sign*c, s.Cmp(t))
+		if below, err = f.first(ctx, k, under, -1); err == nil {
+			above, err = f.first(ctx, k, over, 1)
 		}
+		if err != nil {
+			return nil, nil, wrap(err)
+		}
+		return below, above, nil
 	}
-	slices.SortFunc(below, order(-1))
-	slices.SortFunc(above, order(1))
-	if failed != nil {
-		return nil, nil, wrap(failed)
-	}
-	return below[:min(k, len(below))], above[:min(k, len(above))], nil
 }
 
-// side compares the number at s with n. It tells whether the logarithm of the
-// number is certainly in the window or certainly out of it.
-func (f Family) side(ctx context.Context, s farey.Slope, n *big.Int, window span) (c int, in, out bool, err error) {
+// sighting is a slope in a window about ln n.
+type sighting struct {
+	slope   farey.Slope
+	log     span
+	sign    int  // of its number less n
+	in, out bool // the logarithm is certainly in the window, or certainly out of it
+}
+
+// sight looks at a slope.
+func (f Family) sight(ctx context.Context, s farey.Slope, n *big.Int, window span) (x sighting, err error) {
 	l, err := f.logSpan(ctx, s, 96)
 	if err != nil {
-		return 0, false, false, err
+		return x, err
 	}
-	in = l.lo.Cmp(window.lo) >= 0 && l.hi.Cmp(window.hi) <= 0
-	out = l.hi.Cmp(window.lo) < 0 || l.lo.Cmp(window.hi) > 0
-	at := logInt(n, 80, 128)
-	switch {
-	case l.hi.Cmp(at.lo) < 0:
-		return -1, in, out, nil
-	case l.lo.Cmp(at.hi) > 0:
-		return 1, in, out, nil
+	x = sighting{slope: s, log: l}
+	x.in = l.lo.Cmp(window.lo) >= 0 && l.hi.Cmp(window.hi) <= 0
+	x.out = l.apart(window) != 0
+	if x.sign = l.apart(logInt(n, 80, 128)); x.sign == 0 {
+		number, err := f.WithLimit(int64(n.BitLen())+64).NumberContext(ctx, s)
+		if err != nil {
+			return x, err
+		}
+		x.sign = number.Cmp(n)
 	}
-	x, err := f.WithLimit(int64(n.BitLen())+64).NumberContext(ctx, s)
-	if err != nil {
-		return 0, false, false, err
+	return x, nil
+}
+
+// first returns the first k slopes by number, from the smallest on for sign 1
+// and from the largest on for sign −1; by slope where numbers are equal.
+func (f Family) first(ctx context.Context, k int, found []sighting, sign int) (slopes []farey.Slope, err error) {
+	slices.SortFunc(found, func(a, b sighting) int {
+		c := a.log.apart(b.log)
+		if c == 0 && err == nil {
+			c, err = f.CompareContext(ctx, a.slope, b.slope)
+		}
+		return cmp.Or(sign*c, a.slope.Cmp(b.slope))
+	})
+	for _, x := range found[:min(k, len(found))] {
+		slopes = append(slopes, x.slope)
 	}
-	return x.Cmp(n), in, out, nil
+	return slopes, err
 }

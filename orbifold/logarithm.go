@@ -31,6 +31,17 @@ func (s span) wider(bits uint) span {
 	return span{down(p).Sub(s.lo, d), up(p).Add(s.hi, d)}
 }
 
+// apart returns −1 or +1 when all of s is below or above all of t, else 0.
+func (s span) apart(t span) int {
+	switch {
+	case s.hi.Cmp(t.lo) < 0:
+		return -1
+	case s.lo.Cmp(t.hi) > 0:
+		return 1
+	}
+	return 0
+}
+
 // round returns the smallest interval with ends of precision prec around s.
 func (s span) round(prec uint) span { return span{down(prec).Set(s.lo), up(prec).Set(s.hi)} }
 
