@@ -1,6 +1,7 @@
 package orbifold
 
 import (
+	"context"
 	"errors"
 	"fmt"
 	"iter"
@@ -105,12 +106,21 @@ func (r Recurrence) Terms() iter.Seq[*big.Rat] {
 // differs; a nil term is an error too. Cost: as many products as terms times
 // coefficients that are not zero.
 func (r Recurrence) Check(terms []*big.Int) error {
+	return r.CheckContext(context.Background(), terms)
+}
+
+// CheckContext is Check that stops when ctx ends, with its error.
+func (r Recurrence) CheckContext(ctx context.Context, terms []*big.Int) error {
+	ctx = contextOf(ctx)
 	d := len(r.initial)
 	factors, denominator := r.cleared()
 	sum, product := new(big.Int), new(big.Int)
 	for n, a := range terms {
 		if a == nil {
 			return fmt.Errorf("orbifold: term %d is missing: %w", n, ErrNotRecurrent)
+		}
+		if err := ctx.Err(); err != nil {
+			return fmt.Errorf("orbifold: check of a recurrence: %w", err)
 		}
 		same := true
 		if n < d {

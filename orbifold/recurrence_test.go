@@ -1,6 +1,7 @@
 package orbifold_test
 
 import (
+	"context"
 	"fmt"
 	"math/big"
 	"testing"
@@ -159,6 +160,9 @@ func TestRecurrenceTexts(t *testing.T) {
 	half := must(orbifold.NewRecurrence(orbifold.PolynomialOf(-1, 2), big.NewInt(8)))(t)
 	assert.Equal(t, "a(n) = 1/2·a(n−1)", half.String())
 	assert.NoError(t, half.Check([]*big.Int{big.NewInt(8), big.NewInt(4), big.NewInt(2)}))
+	ended, cancel := context.WithCancel(t.Context())
+	cancel()
+	assert.ErrorIs(t, half.CheckContext(ended, []*big.Int{big.NewInt(8)}), context.Canceled)
 	assert.Error(t, half.Check([]*big.Int{big.NewInt(8), big.NewInt(4), big.NewInt(3)}))
 	// A recurrence that is not minimal has its generating function in lowest terms.
 	long := must(orbifold.NewRecurrence(orbifold.PolynomialOf(1, -3, 1).Mul(orbifold.PolynomialOf(-2, 1)), big.NewInt(1), big.NewInt(1), big.NewInt(2)))(t)

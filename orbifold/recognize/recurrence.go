@@ -74,8 +74,10 @@ func (s Sequence) Recurrence(ctx context.Context) (Recurrence, error) {
 			continue
 		}
 		l.next = l.primes + (l.primes+1)/2
-		if rule, ok := l.rule(s.terms); ok {
+		if rule, ok := l.rule(ctx, s.terms); ok {
 			return Recurrence{Found, rule, n - 2*length}, nil
+		} else if err := ctx.Err(); err != nil {
+			return Recurrence{}, fmt.Errorf("recognize: recurrence of %d terms: %w", n, err)
 		}
 		// Coefficients are quotients of minors of the Hankel matrix, so this many
 		// primes would show them.
@@ -115,8 +117,10 @@ func (l *lifting) add(c []uint64, p uint64) {
 }
 
 // rule returns the recurrence with the polynomial over Q, if it holds for the
-// terms and is the shortest there.
-func (l *lifting) rule(terms []*big.Int) (orbifold.Recurrence, bool) {
+// terms. It is the shortest then: modulo a prime the shortest of twice as many
+// terms or more as its length is unique, so the Hankel matrix of that many
+// rows is not singular there, nor over Q.
+func (l *lifting) rule(ctx context.Context, terms []*big.Int) (orbifold.Recurrence, bool) {
 	d := len(l.c) - 1
 	c := make([]*big.Rat, d+1)
 	for i, x := range l.c {
@@ -127,10 +131,8 @@ func (l *lifting) rule(terms []*big.Int) (orbifold.Recurrence, bool) {
 		c[d-i] = r
 	}
 	rule, err := orbifold.NewRecurrence(orbifold.NewPolynomial(c...), terms[:d]...)
-	if err != nil || rule.Check(terms) != nil {
+	if err != nil || rule.CheckContext(ctx, terms) != nil {
 		return orbifold.Recurrence{}, false
 	}
-	// The generating function tells the length of the shortest.
-	g := rule.GeneratingFunction()
-	return rule, max(g.Denominator().Degree(), g.Numerator().Degree()+1) == d
+	return rule, true
 }

@@ -9,13 +9,6 @@ import (
 	"example.com/onecusp/orbifold"
 )
 
-// section is a way to see a sequence of trace T as every d-th term of one of
-// trace t: T = V_d(t) for the Lucas sequence of t.
-type section struct {
-	d int64
-	t *big.Int
-}
-
 // sections returns all of them with t ≥ 3 for a trace T ≥ 3, by increasing d.
 //
 // With Λ = (T + √(T²−4))/2 and λ likewise, T = V_d(t) says Λ = λᵈ. The units

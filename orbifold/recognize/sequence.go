@@ -63,15 +63,12 @@ func ParseSequence(text string) (Sequence, error) {
 	}
 	var terms []*big.Int
 	// A comma separates two terms, so that "1,,2" lacks one.
-	for i, part := range strings.Split(text, ",") {
-		words := strings.Fields(part)
-		if len(words) == 0 {
-			if strings.TrimSpace(text) == "" {
-				break
-			}
-			return Sequence{}, fmt.Errorf("recognize: sequence %q: an integer is missing beside comma %d: %w", clip(text), max(i, 1), ErrSyntax)
+	blank := strings.TrimSpace(text) == ""
+	for part := range strings.SplitSeq(text, ",") {
+		if strings.TrimSpace(part) == "" && !blank {
+			return Sequence{}, fmt.Errorf("recognize: sequence %q: an integer is missing beside a comma: %w", clip(text), ErrSyntax)
 		}
-		for _, word := range words {
+		for word := range strings.FieldsSeq(part) {
 			a, err := parseInteger(word)
 			if err != nil {
 				return Sequence{}, err
@@ -187,23 +184,25 @@ func ReadIndexed(r io.Reader) (Sequence, int64, error) {
 	}
 	var terms []*big.Int
 	first := int64(0)
-	for number, line := range bytes.Split(text, []byte("\n")) {
+	number := 0
+	for line := range bytes.SplitSeq(text, []byte("\n")) {
+		number++
 		words := strings.Fields(string(line))
 		if len(words) == 0 || strings.HasPrefix(words[0], "#") {
 			continue
 		}
 		if len(words) != 2 {
-			return Sequence{}, 0, fmt.Errorf("recognize: line %d, %q: want an index and a value: %w", number+1, clip(string(line)), ErrSyntax)
+			return Sequence{}, 0, fmt.Errorf("recognize: line %d, %q: want an index and a value: %w", number, clip(string(line)), ErrSyntax)
 		}
 		index, err := strconv.ParseInt(words[0], 10, 64)
 		if err != nil {
-			return Sequence{}, 0, fmt.Errorf("recognize: line %d: index %q: want an integer of at most 64 bits: %w", number+1, clip(words[0]), ErrSyntax)
+			return Sequence{}, 0, fmt.Errorf("recognize: line %d: index %q: want an integer of at most 64 bits: %w", number, clip(words[0]), ErrSyntax)
 		}
 		if len(terms) == 0 {
 			first = index
 		}
 		if want := first + int64(len(terms)); index != want || want < first {
-			return Sequence{}, 0, fmt.Errorf("recognize: line %d: index %d: want one more than the line before: %w", number+1, index, ErrIndex)
+			return Sequence{}, 0, fmt.Errorf("recognize: line %d: index %d: want one more than the line before: %w", number, index, ErrIndex)
 		}
 		a, err := parseInteger(words[1])
 		if err != nil {
