@@ -40,7 +40,8 @@ func fanAt(t require.TestingT, f orbifold.Family, centre farey.Slope, shift int6
 // must2 is must for a result with one more that is not wanted.
 func must2[T any](v, _ T, err error) func(require.TestingT) T { return must(v, err) }
 
-// stepped returns y₀ … y_{n−1}, or y₀, y₋₁, … for direction −1, by single steps of (X) with exact division.
+// stepped returns y₀ … y_{n−1}, or y₀, y₋₁, … for direction −1, by single steps of
+// (X) with exact division.
 func stepped(t require.TestingT, f orbifold.Fan, n int, direction int64) []*big.Int {
 	fam := f.Family()
 	k := big.NewInt(fam.Weight(f.Centre().Class()))

@@ -32,6 +32,7 @@ type family struct {
 	Equation string     `json:"equation"`
 	Slopes   [][]string `json:"slopes"` // by integer
 	Carried  int        `json:"carried"`
+	Rarity   []float64  `json:"rarity,omitempty"` // by integer: about one in 10^rarity of its size is carried
 	Together bool       `json:"together"`
 }
 
@@ -117,7 +118,7 @@ func (a *answer) askNumbers(ctx context.Context, s recognize.Sequence, o options
 	}
 	a.SearchedTo = o.weight
 	for _, m := range found {
-		x := family{Weights: weightsOf(m.Family), Equation: m.Family.Equation(), Carried: m.Carried, Together: m.Together}
+		x := family{Weights: weightsOf(m.Family), Equation: m.Family.Equation(), Carried: m.Carried, Rarity: m.Rarity, Together: m.Together}
 		for _, list := range m.Slopes {
 			texts := []string{}
 			for _, slope := range list {

@@ -51,6 +51,9 @@ func (a answer) writeNumbers(b *strings.Builder) {
 		for j, list := range x.Slopes {
 			if len(list) > 0 {
 				fmt.Fprintf(b, "; %s at %s", a.Integers[j], strings.Join(list, ", "))
+				if r := x.Rarity[j]; r >= 1 {
+					fmt.Fprintf(b, " (one integer in about 10^%.0f of this size is carried)", r)
+				}
 			}
 		}
 		if x.Together {

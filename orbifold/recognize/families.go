@@ -25,6 +25,11 @@ type FamilyMatch struct {
 	Slopes [][]farey.Slope
 	// Carried is the number of integers with a slope.
 	Carried int
+	// Rarity tells, for each integer that is carried, how much that means: about
+	// one in 10^Rarity integers of its size is carried by the family. It is an
+	// estimate, from the exact count of the family's numbers up to 10¹² and the law that their
+	// count grows like the square of the logarithm; 0 where not carried.
+	Rarity []float64
 	// Together tells that two or three different integers were asked for and are
 	// carried by slopes that are neighbours of each other.
 	Together bool
@@ -90,7 +95,7 @@ func Families(ctx context.Context, numbers []*big.Int, o Options) ([]FamilyMatch
 }
 
 func matchFamily(ctx context.Context, f orbifold.Family, numbers []*big.Int) (FamilyMatch, error) {
-	m := FamilyMatch{Family: f}
+	m := FamilyMatch{Family: f, Rarity: make([]float64, len(numbers))}
 	for _, n := range numbers {
 		slopes, err := f.Identify(ctx, n)
 		if err != nil {
@@ -99,6 +104,14 @@ func matchFamily(ctx context.Context, f orbifold.Family, numbers []*big.Int) (Fa
 		m.Slopes = append(m.Slopes, slopes)
 		if len(slopes) > 0 {
 			m.Carried++
+		}
+	}
+	if m.Carried > 0 {
+		c := density(f)
+		for i, n := range numbers {
+			if len(m.Slopes[i]) > 0 {
+				m.Rarity[i] = rarity(c, n)
+			}
 		}
 	}
 	m.Together = m.Carried == len(numbers) && together(f, numbers, m.Slopes)

@@ -99,8 +99,8 @@ func TestFamiliesRankEvidence(t *testing.T) {
 	}
 }
 
-// TestFamiliesKnowCoincidences are those of the weights (3,0,0) and (2,1,0): 5
-// stands at inequivalent slopes.
+// TestFamiliesKnowCoincidences: in the family (3,0,0) the number 5
+// stands at inequivalent slopes, such as 2 and −1/2.
 func TestFamiliesKnowCoincidences(t *testing.T) {
 	found := must(recognize.Families(t.Context(), ints(5), recognize.Options{Weight: 3}))(t)
 	for _, m := range found {

@@ -33,16 +33,17 @@ const FewTerms = 4
 // terms in arithmetic progression: every d-th arc of the fan, in either direction, d ≥ 1.
 // One of each class under symmetry is reported.
 //
-// From five terms on the answer is complete; see FewTerms. Why nothing is
-// missed: every d-th term of a fan of trace t satisfies
-// a_{j+1} + a_{j−1} = T·a_j − E_j with T = V_d(t) and E_j ≥ 0 of period two, so
-// b_j = a_{j+2} − a_j satisfies b_{j+1} + b_{j−1} = T·b_j, which gives T. The d and t ≥ 3 with
-// V_d(t) = T are finitely many. E determines the weights of the arcs times the
-// centre's number N: uniquely for odd d, up to two cases for even d. By (E), y₀² + y₁² + N² + N·(c₀·y₁ + c₁·y₀) = t·y₀·y₁, which gives N, and
-// t = K·N − k gives the centre's weight, unless N = 1. What comes out is a solution of (E)
-// in positive integers, and each of those is a triple of the family at known
-// slopes ("Generalization of Markov Diophantine equation via generalized
-// cluster algebra", Electron. J. Combin. 30 (2023)).
+// From five terms on the answer is complete; see FewTerms. Why nothing is missed:
+// every d-th term of a fan of trace t satisfies a_{j+1} + a_{j−1} = T·a_j − E_j
+// with T = V_d(t) and E_j ≥ 0 of period two, so b_j = a_{j+2} − a_j satisfies
+// b_{j+1} + b_{j−1} = T·b_j, which gives T. The d and t ≥ 3 with V_d(t) = T are
+// finitely many. E determines the weights of the arcs times the centre's number N:
+// uniquely for odd d, up to two cases for even d. By (E), y₀² + y₁² + N² +
+// N·(c₀·y₁ + c₁·y₀) = t·y₀·y₁, which gives N, and t = K·N − k gives the centre's
+// weight, unless N = 1. What comes out is a solution of (E) in positive integers,
+// and each of those is a triple of the family at known slopes ("Generalization of
+// Markov Diophantine equation via generalized cluster algebra", Electron. J.
+// Combin. 30 (2023)).
 //
 // Terms below 1 are ErrNotPositive, three and more equal ones ErrConstant, and
 // weights that pass int64 ErrTooLarge. Options count for undecided sequences

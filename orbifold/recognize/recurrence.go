@@ -26,13 +26,13 @@ type Recurrence struct {
 // or less does, and Surplus terms could have refuted it. Else the answer is
 // Undecided. Three terms at least are needed for a sequence that is not zero.
 //
-// It is found modulo primes of 62 bits by the Berlekamp–Massey algorithm,
-// raised by the Chinese remainder theorem and rational reconstruction until it
-// satisfies the terms, and checked over the integers. "Undecided" rests on
-// three primes; it could be said wrongly only of a recurrence with a denominator divisible by
-// all of them. Cost for n terms of b bits: O(n·order) word operations for each prime, of which there are
-// as many as the coefficients have words, and O(n·order) products of b bits.
-// The only error for a sequence with terms is that of ctx.
+// It is found modulo primes of 62 bits by the Berlekamp–Massey algorithm, raised
+// by the Chinese remainder theorem and rational reconstruction until it satisfies
+// the terms, and checked over the integers. "Undecided" rests on three primes; it
+// could be said wrongly only of a recurrence with a denominator divisible by all
+// of them. Cost for n terms of b bits: O(n·order) word operations for each prime,
+// of which there are as many as the coefficients have words, and O(n·order)
+// products of b bits. The only error for a sequence with terms is that of ctx.
 func (s Sequence) Recurrence(ctx context.Context) (Recurrence, error) {
 	if len(s.terms) == 0 {
 		return Recurrence{}, fmt.Errorf("recognize: recurrence of a sequence without terms: %w", ErrEmpty)

@@ -27,13 +27,14 @@ type WeightSet struct {
 //
 //	yz(x−1)·k₀ + zx(y−1)·k∞ + xy(z−1)·k₁ = x² + y² + z² − 3xyz.
 //
-// So a weight is free exactly where the number is 1. The others have one value
-// or there is no solution at all. Proof, for 1 < x < y < z (two equal numbers
-// above 1 make the right side negative): modulo z it says z | xy·k₁ + x² + y², and
-// xy·k₁ < z, which determines k₁. Two pairs k₀, k∞ would differ by a multiple of
-// the least common multiple of their coefficients. Over z that is at least y(y−1), since the greatest
-// common divisor of y(x−1) and x(y−1) divides y − x and hence x(x−1); but what is left of the right
-// side over z is at most x² + y² + 1 − 3xy < y(y−1). The same for x = 1 < y < z with z(z−1).
+// So a weight is free exactly where the number is 1. The others have one value or
+// there is no solution at all. Proof, for 1 < x < y < z (two equal numbers above 1
+// make the right side negative): modulo z it says z | xy·k₁ + x² + y², and xy·k₁ <
+// z, which determines k₁. Two pairs k₀, k∞ would differ by a multiple of the least
+// common multiple of their coefficients. Over z that is at least y(y−1), since the
+// greatest common divisor of y(x−1) and x(y−1) divides y − x and hence x(x−1); but
+// what is left of the right side over z is at most x² + y² + 1 − 3xy < y(y−1). The
+// same for x = 1 < y < z with z(z−1).
 //
 // Cost: a few multiplications and divisions and one modular inverse.
 func Weights(zero, infinity, one *big.Int) (WeightSet, error) {
