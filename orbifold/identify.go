@@ -74,13 +74,16 @@ func (f Family) between(ctx context.Context, lo, hi *big.Float) ([]farey.Slope, 
 	var found []farey.Slope
 	h, ok := newHunt(f, lo, hi)
 	if !ok { // weights past the precision of float64: few slopes, all visited
-		_, bits := span{lo, hi}.bits()
-		bound := new(big.Int).Lsh(unit, uint(bits.Uint64()))
+		least, most := span{lo, hi}.bits()
+		bound := new(big.Int).Lsh(unit, uint(most.Uint64()))
 		for node := range f.walk(true, atMost(bound)) {
 			if err := ctx.Err(); err != nil {
 				return nil, err
 			}
-			if l := logInt(node.value(), 80, 128); l.hi.Cmp(lo) >= 0 && l.lo.Cmp(hi) <= 0 {
+			if least.Cmp(big.NewInt(int64(node.value().BitLen()))) > 0 {
+				continue // saves most of the logarithms
+			}
+			if logInt(node.value(), 80, 128).apart(span{lo, hi}) == 0 {
 				found = append(found, node.slope)
 			}
 		}
