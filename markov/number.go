@@ -44,9 +44,9 @@ func Frobenius(index farey.Slope) (*big.Int, error) {
 // n is no Markov number. With a nil error the list is complete. That it never has
 // two members is the uniqueness conjecture.
 //
-// It is Family().Identify with slopes as indices: it looks at every Markov number
-// up to n, some 0.181·(ln 3n)² of them. An n below 1 is ErrNotPositive. When ctx
-// ends first, the result is nil and the error that of ctx.
+// It is Family().Identify with slopes as indices: it visits the Markov numbers up
+// to √n, some 0.045·(ln n)² of them. An n below 1 is ErrNotPositive. When ctx ends
+// first, the result is nil and the error that of ctx.
 func Indices(ctx context.Context, n *big.Int) ([]farey.Slope, error) {
 	found, err := Family().Identify(ctx, n)
 	if err != nil {

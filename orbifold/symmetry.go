@@ -32,10 +32,10 @@ func (f Family) Under(g farey.Symmetry) Family {
 }
 
 // Domain returns the ends of the closed interval of slopes that holds exactly
-// one slope of each symmetry class: [0, 1/2] when all weights are equal, [−1, 1] for
-// k₀ = k∞ alone, [1/2, ∞] for k₀ = k₁ alone, [0, 2] for k∞ = k₁ alone. When all
-// weights differ there is no symmetry, every slope stands for itself, and all
-// is false.
+// one slope of each symmetry class: [0, 1/2] when all weights are equal, [−1, 1]
+// for k₀ = k∞ alone, [1/2, ∞] for k₀ = k₁ alone, [0, 2] for k∞ = k₁ alone. When
+// all weights differ there is no symmetry and every slope stands for itself: all
+// is true then, and the ends mean nothing.
 func (f Family) Domain() (lo, hi farey.Slope, all bool) {
 	zero, infinity, one := f.weights[farey.Zero], f.weights[farey.Infinity], f.weights[farey.One]
 	switch {

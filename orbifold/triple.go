@@ -32,7 +32,8 @@ func (f Family) NewTriple(zero, infinity, one *big.Int) (Triple, error) {
 func (f Family) triple(numbers [3]*big.Int) Triple { return Triple{f, numbers} }
 
 // Triple returns the numbers at the vertices of the triangle t. Cost and
-// errors are those of Number at its newest vertex.
+// errors are those of Number at its newest vertex; the limit of the family is
+// tested against three times the bits of the number there.
 func (f Family) Triple(t farey.Triangle) (Triple, error) {
 	newest, _ := t.Newest()
 	if err := f.fits(context.Background(), t.Vertex(newest), 3); err != nil {
