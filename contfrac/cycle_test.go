@@ -101,6 +101,18 @@ func TestLeastRotationOfOneLetterAloneIsTheWord(t *testing.T) {
 	}
 }
 
+// Run lengths of several bytes, and of some hundred bits, are compared as numbers.
+func TestLeastRotationComparesLongRunsAsNumbers(t *testing.T) {
+	for given, want := range map[string]string{
+		"R200 L R3 L": "R3 L R200 L", "R3 L R200 L": "R3 L R200 L", "R256 L R255 L": "R255 L R256 L",
+		"R7 L340282366920938463463374607431768211457 R7 L340282366920938463463374607431768211456": "R7 L340282366920938463463374607431768211456 R7 L340282366920938463463374607431768211457",
+	} {
+		w, err := contfrac.ParseWord(given)
+		require.NoError(t, err)
+		assert.Equal(t, want, w.LeastRotation().Compact())
+	}
+}
+
 func TestCycleOfAPositiveWordIsTheWordUpToRotation(t *testing.T) {
 	atThresholds(t, func(t *testing.T) {
 		rapid.Check(t, func(t *rapid.T) {

@@ -117,28 +117,22 @@ func (t target) at(ctx context.Context, s farey.Slope) (verdict, error) {
 		}
 		return nowhere, err
 	}
-	n := m.B()
-	high := m.A()
+	n, y := m.B(), m.A()
 	size := n.Cmp(t.n)
 	if size > 0 {
 		return nowhere, nil
 	}
-	// The place is of n, so that of s is multiplied by n/N.
-	scaled := contfrac.Product(t.place, n)
-	switch scaled.Cmp(contfrac.Product(high.Neg(high), t.n)) {
-	case 0:
-		return here, nil // both fractions are in lowest terms, so the numbers agree
-	case 1:
-		if size == 0 {
-			return nowhere, nil
-		}
+	// place/n against −y/N. Both are in lowest terms, so equal places are equal numbers.
+	order := contfrac.Product(t.place, n).Cmp(contfrac.Product(y.Neg(y), t.n))
+	switch {
+	case order == 0:
+		return here, nil
+	case size == 0:
+		return nowhere, nil
+	case order > 0:
 		return above, nil
 	}
-	low := high.Sub(high, weight(t.f, s))
-	if size == 0 || scaled.Cmp(contfrac.Product(low, t.n)) >= 0 {
-		return nowhere, nil
-	}
-	return below, nil
+	return below, nil // or within the interval, where no other arc ends
 }
 
 // descend looks for the target behind the first flip.

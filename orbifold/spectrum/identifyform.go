@@ -13,7 +13,7 @@ import (
 // IdentifyForm returns the slopes s in Q ∪ {∞} whose form F_s (Form) is properly equivalent to a
 // positive multiple of g, increasing, 1/0 last; none if there are none.
 //
-// The least value of g and its discriminant leave at most two numbers N for each weight. Every way
+// The least value of g and its discriminant leave at most one number N for each weight. Every way
 // in which the form takes the value N, up to automorphs, is a member of its cycle, with a root y
 // modulo N, and IdentifyRoot has the slopes. So each slope returned is proved, and the list is
 // complete if N is the least value of F_s: see Form on how far that is proved.
@@ -57,21 +57,23 @@ func identifyForms(ctx context.Context, f orbifold.Family, forms ...contfrac.For
 			return nil, err
 		}
 		for _, k := range weights(f) {
-			for _, scale := range scales(f, k, g.Discriminant(), least) {
-				n := contfrac.Product(scale, least)
-				t := trace(f.K(), n, big.NewInt(k))
-				for _, b := range middles {
-					// b of F_s is −(t − 2y).
-					y := contfrac.Product(scale, b)
-					y.Add(y, t)
-					slopes, err := IdentifyRoot(ctx, f, n, y.Mod(y.Rsh(y, 1), n))
-					if err != nil {
-						return nil, err
-					}
-					for _, s := range slopes {
-						if f.Weight(s.Class()) == k {
-							found.add(s)
-						}
+			scale, ok := scaleOf(f, k, g.Discriminant(), least)
+			if !ok {
+				continue
+			}
+			n := contfrac.Product(scale, least)
+			t := trace(f.K(), n, big.NewInt(k))
+			for _, b := range middles {
+				// b of F_s is −(t − 2y).
+				y := contfrac.Product(scale, b)
+				y.Add(y, t)
+				slopes, err := IdentifyRoot(ctx, f, n, y.Mod(y.Rsh(y, 1), n))
+				if err != nil {
+					return nil, err
+				}
+				for _, s := range slopes {
+					if f.Weight(s.Class()) == k {
+						found.add(s)
 					}
 				}
 			}
@@ -112,43 +114,30 @@ func ctxErr(ctx context.Context) error {
 	return ctx.Err()
 }
 
-// scales returns the integers g ≥ 1 by which a primitive form of discriminant d and least value m
-// is multiplied to be F_s for a slope of weight k: those with g²d = (K·g·m − k)² − 4.
-func scales(f orbifold.Family, k int64, d, m *big.Int) []*big.Int {
-	// (K²m² − d)·g² − 2Kmk·g + k² − 4 = 0
+// scaleOf returns the integer g ≥ 1 by which a primitive form of discriminant d and least value m
+// is multiplied to be F_s for a slope of weight k, if there is one: g²d = (K·g·m − k)² − 4.
+func scaleOf(f orbifold.Family, k int64, d, m *big.Int) (g *big.Int, ok bool) {
+	// With a = K²m² − d, a·g² − 2Kmk·g + k² − 4 = 0. As N = g·m has d·g² < (K·N)², a > 0, and as
+	// a·g − Kmk = (K·N·k − k² + 4)/g > 0, g is the greater root.
 	km := contfrac.Product(f.K(), m)
 	a := contfrac.Product(km, km)
 	a.Sub(a, d)
-	b := new(big.Int).Mul(km, big.NewInt(k)) // half the middle coefficient
-	kk := big.NewInt(k)
-	c := kk.Mul(kk, kk)
+	if a.Sign() <= 0 {
+		return nil, false
+	}
+	weight := big.NewInt(k)
+	b := contfrac.Product(km, weight)
+	c := new(big.Int).Mul(weight, weight)
 	c.Sub(c, big.NewInt(4))
-	var found []*big.Int
-	keep := func(num, den *big.Int) {
-		if den.Sign() == 0 {
-			return
-		}
-		g, rest := new(big.Int).QuoRem(num, den, new(big.Int))
-		if rest.Sign() == 0 && g.Sign() > 0 {
-			found = append(found, g)
-		}
+	square := contfrac.Product(b, b)
+	square.Sub(square, contfrac.Product(a, c))
+	if square.Sign() < 0 {
+		return nil, false
 	}
-	if a.Sign() == 0 {
-		keep(c, new(big.Int).Lsh(b, 1))
-		return found
+	root := new(big.Int).Sqrt(square)
+	if contfrac.Product(root, root).Cmp(square) != 0 {
+		return nil, false
 	}
-	disc := contfrac.Product(b, b)
-	disc.Sub(disc, contfrac.Product(a, c))
-	if disc.Sign() < 0 {
-		return nil
-	}
-	root := new(big.Int).Sqrt(disc)
-	if contfrac.Product(root, root).Cmp(disc) != 0 {
-		return nil
-	}
-	keep(new(big.Int).Add(b, root), a)
-	if root.Sign() != 0 {
-		keep(new(big.Int).Sub(b, root), a)
-	}
-	return found
+	g, rest := b.QuoRem(b.Add(b, root), a, new(big.Int))
+	return g, rest.Sign() == 0 && g.Sign() > 0
 }
