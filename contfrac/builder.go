@@ -69,7 +69,6 @@ func (b *WordBuilder) AppendWord(w Word) {
 	b.close()
 	b.buf = append(b.buf, w.data[end:last]...)
 	b.runs += w.runs - 2
-	b.last = w.runLetter(w.runs - 2)
 	l := w.runLetter(w.runs - 1)
 	b.begin(l)
 	b.append(l, packedBig(w.data[last:]))
