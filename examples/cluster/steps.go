@@ -122,12 +122,7 @@ func locate(ctx context.Context, t Task, doubles func(*uint64) bool, emit func(u
 // settled is what came of one repeated key.
 type settled struct {
 	Shared       bool // by different numbers
-	Coincidences []coincidence
-}
-
-type coincidence struct {
-	Number string
-	Slopes []farey.Slope
+	Coincidences []survey.Coincidence
 }
 
 // settle computes the numbers at the slopes of one key and says which of them agree.
@@ -148,11 +143,8 @@ func settle(ctx context.Context, _ uint64, texts func(*string) bool, region stri
 	if err != nil {
 		return err
 	}
-	out := settled{Shared: len(found) != 1 || len(found[0].Slopes) != len(slopes)}
-	for _, c := range found {
-		out.Coincidences = append(out.Coincidences, coincidence{c.Number.String(), c.Slopes})
-	}
-	text, err := json.Marshal(out)
+	shared := len(found) != 1 || len(found[0].Slopes) != len(slopes)
+	text, err := json.Marshal(settled{shared, found})
 	if err != nil {
 		return err
 	}
@@ -202,10 +194,7 @@ func conclude(ctx context.Context, region string, audits, list func(*string) boo
 		if s.Shared {
 			report.Keys++
 		}
-		for _, c := range s.Coincidences {
-			n, _ := new(big.Int).SetString(c.Number, 10)
-			report.Coincidences = append(report.Coincidences, survey.Coincidence{Number: n, Slopes: c.Slopes})
-		}
+		report.Coincidences = append(report.Coincidences, s.Coincidences...)
 	}
 	slices.SortFunc(report.Coincidences, func(a, b survey.Coincidence) int { return a.Number.Cmp(b.Number) })
 	text, err := json.Marshal(report)

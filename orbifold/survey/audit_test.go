@@ -31,12 +31,12 @@ func checkAudit(t require.TestingT, a Audit, d Digest) {
 func TestAuditBalances(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		f := families().Draw(t, "family")
-		a, d, err := Check(context.Background(), f, bounds(f, 40).Draw(t, "bound"), Options{})
+		a, d, err := Check(context.Background(), f, bounds(f, 25).Draw(t, "bound"), Options{})
 		require.NoError(t, err)
 		checkAudit(t, a, d)
 	})
 	for _, f := range tenFamilies() {
-		a, d, err := Check(context.Background(), f, PowerOfTen(200), Options{})
+		a, d, err := Check(context.Background(), f, PowerOfTen(100), Options{})
 		require.NoError(t, err)
 		checkAudit(t, a, d)
 	}

@@ -8,6 +8,7 @@ import (
 	"slices"
 	"sort"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/orbifold"
 )
 
@@ -43,6 +44,18 @@ type Row struct {
 	// X is about ln(K·Bound), the length up to which Bound reaches: All grows
 	// like G·X² with the constant of Growth.
 	X float64
+}
+
+// String returns the row in words, whole.
+func (r Row) String() string { return fmt.Sprintf("%s", r) }
+
+// Format writes the row with its bound whole for %s and shortened for %v.
+func (r Row) Format(f fmt.State, verb rune) {
+	bound := FormatBound(r.Bound)
+	if verb != 's' && len(bound) > 64 {
+		bound = contfrac.Abbreviate(r.Bound)
+	}
+	fmt.Fprintf(f, "up to %s: %s slopes, %s up to symmetry", bound, whole(r.All), whole(r.Slopes))
 }
 
 // Ratio returns All/(G·X²), which tends to 1 as the bound grows.

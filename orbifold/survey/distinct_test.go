@@ -70,7 +70,7 @@ func TestDistinctFindsAllCoincidences(t *testing.T) {
 		assert.True(t, slices.IsSortedFunc(r.Coincidences, func(a, b Coincidence) int { return a.Number.Cmp(b.Number) }))
 	}
 	for _, f := range tenFamilies() {
-		check(t, f, PowerOfTen(60))
+		check(t, f, PowerOfTen(45))
 	}
 	rapid.Check(t, func(t *rapid.T) {
 		f := families().Draw(t, "family")
@@ -116,7 +116,7 @@ func TestReportIsTheSameForEveryWay(t *testing.T) {
 			{0, bucketKeys, maxBuckets}, {1, 1, 1 << 20}, {2, 1 << 30, 1}, {3, 1000, 3}, {5, 64, 100_000}, {2, 2000, 40},
 		} {
 			tune(t, way.keys, way.buckets)
-			bound := PowerOfTen(250)
+			bound := PowerOfTen(150)
 			if way.keys == 1000 {
 				tune(t, 5000, 3)
 			}
@@ -305,14 +305,14 @@ func TestKilledSurveysGoOn(t *testing.T) {
 		file := filepath.Join(t.TempDir(), "checkpoint")
 		random := rand.New(rand.NewPCG(1, uint64(time.Now().UnixNano())))
 		kills := 0
-		for kills < 60 {
+		for kills < 100 {
 			c := exec.Command(os.Args[0], "-test.run=^TestHelperSurvey$")
 			c.Env = append(os.Environ(), "ONECUSP_SURVEY_FILE="+file, "ONECUSP_SURVEY_KIND="+kind)
 			require.NoError(t, c.Start())
 			done := make(chan error, 1)
 			go func() { done <- c.Wait() }()
 			finished := false
-			wait := time.Duration(20+random.IntN(150+20*kills)) * time.Millisecond
+			wait := time.Duration(20+random.IntN(150+50*kills)) * time.Millisecond
 			select {
 			case err := <-done:
 				require.NoError(t, err)

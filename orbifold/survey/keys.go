@@ -36,6 +36,9 @@ func bucketBits(n float64) uint {
 	return b
 }
 
+// largestSpace bounds the memory of a pass by what numbers of chunks and sizes of slices hold.
+const largestSpace = 1 << (30 + 10*(math.MaxInt>>62))
+
 // plan is the division of keys into buckets and passes.
 type plan struct {
 	bits   uint    // of the number of a bucket
@@ -49,6 +52,7 @@ type plan struct {
 func newPlan(n float64, workers int, memory int64) (plan, bool) {
 	p := plan{bits: bucketBits(n)}
 	p.mean = math.Ldexp(n, -int(p.bits))
+	memory = min(memory, largestSpace)
 	most := min(1<<p.bits, maxBuckets)
 	// The smallest number of passes whose buckets fit.
 	fits := sort.Search(most, func(i int) bool { return p.memory(most-i, workers) <= float64(memory) })

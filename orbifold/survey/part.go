@@ -95,6 +95,10 @@ func (p *Part[S]) UnmarshalJSON(text []byte) error {
 	if len(text) > MaxText {
 		return fmt.Errorf("survey: part of %d bytes: want at most %d: %w", len(text), MaxText, ErrTooLarge)
 	}
+	if string(text) == "null" { // of the zero value
+		*p = Part[S]{}
+		return nil
+	}
 	var t partText[S]
 	if err := strictJSON(text, &t); err != nil {
 		return fmt.Errorf("survey: part: %w", err)

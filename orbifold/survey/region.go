@@ -120,6 +120,21 @@ func (r Region) And(o Region) (Region, error) {
 	return out, nil
 }
 
+// clone returns a region that shares nothing with r.
+func (r Region) clone() Region {
+	if r.Bound != nil {
+		r.Bound = new(big.Int).Set(r.Bound)
+	}
+	if r.Box != nil {
+		r.Box = &Box{r.Box.Num, r.Box.Den}
+	}
+	if r.Among != nil {
+		r.Among = &Interval{r.Among.Lo, r.Among.Hi}
+	}
+	r.Fans, r.Lines = slices.Clone(r.Fans), slices.Clone(r.Lines)
+	return r
+}
+
 // regionText is the JSON form of a region.
 type regionText struct {
 	Weights string    `json:"weights"`

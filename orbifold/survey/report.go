@@ -18,6 +18,61 @@ type Coincidence struct {
 	Slopes []farey.Slope // representatives of two or more symmetry classes, increasing
 }
 
+// String returns the number and the slopes, "81 at 2/5 4/3", whole.
+func (c Coincidence) String() string { return fmt.Sprintf("%s", c) }
+
+// Format writes the number whole for %s and shortened for %v.
+func (c Coincidence) Format(f fmt.State, verb rune) {
+	number := contfrac.Abbreviate
+	if verb == 's' {
+		number = whole
+	}
+	io.WriteString(f, c.text(number))
+}
+
+func (c Coincidence) text(number func(*big.Int) string) string {
+	text := number(c.Number) + " at"
+	for _, s := range c.Slopes {
+		text += " " + s.String()
+	}
+	return text
+}
+
+type coincidenceText struct {
+	Number string        `json:"number"`
+	Slopes []farey.Slope `json:"slopes"`
+}
+
+// MarshalJSON writes an object with the fields number, a decimal string, and slopes.
+func (c Coincidence) MarshalJSON() ([]byte, error) {
+	return json.Marshal(coincidenceText{whole(c.Number), c.Slopes})
+}
+
+// UnmarshalJSON reads what MarshalJSON writes and refuses everything else with
+// ErrSyntax or the errors of slopes.
+func (c *Coincidence) UnmarshalJSON(text []byte) error {
+	if len(text) > MaxText {
+		return fmt.Errorf("survey: coincidence of %d bytes: want at most %d: %w", len(text), MaxText, ErrTooLarge)
+	}
+	var t coincidenceText
+	if err := strictJSON(text, &t); err != nil {
+		return fmt.Errorf("survey: coincidence: %w", err)
+	}
+	var out Coincidence
+	if t.Number != "0" || t.Slopes != nil {
+		n, err := ParseBound(t.Number)
+		if err != nil {
+			return fmt.Errorf("survey: coincidence: %w", err)
+		}
+		out = Coincidence{n, t.Slopes}
+	}
+	if err := sameText(out, text); err != nil {
+		return fmt.Errorf("survey: coincidence %q: %w", clip(string(text)), err)
+	}
+	*c = out
+	return nil
+}
+
 // Report is the result of Distinct. It depends on the family and the bound alone,
 // to the last byte of its text and JSON forms.
 type Report struct {
@@ -36,29 +91,24 @@ type Report struct {
 // Distinct tells whether inequivalent slopes carry different numbers throughout.
 func (r Report) Distinct() bool { return r.Slopes != nil && len(r.Coincidences) == 0 }
 
-type coincidenceText struct {
-	Number string        `json:"number"`
-	Slopes []farey.Slope `json:"slopes"`
-}
-
 // MarshalJSON writes an object with the fields format, version, weights, bound,
 // slopes, distinct, coincidences, keys, digest and audit.
 func (r Report) MarshalJSON() ([]byte, error) {
-	list := make([]coincidenceText, len(r.Coincidences))
-	for i, c := range r.Coincidences {
-		list[i] = coincidenceText{fmt.Sprint(whole(c.Number)), c.Slopes}
+	list := r.Coincidences
+	if list == nil {
+		list = []Coincidence{}
 	}
 	return json.Marshal(struct {
-		Format       string            `json:"format"`
-		Version      int               `json:"version"`
-		Weights      string            `json:"weights"`
-		Bound        string            `json:"bound"`
-		Slopes       string            `json:"slopes"`
-		Distinct     bool              `json:"distinct"`
-		Coincidences []coincidenceText `json:"coincidences"`
-		Keys         int               `json:"keys"`
-		Digest       Digest            `json:"digest"`
-		Audit        Audit             `json:"audit"`
+		Format       string        `json:"format"`
+		Version      int           `json:"version"`
+		Weights      string        `json:"weights"`
+		Bound        string        `json:"bound"`
+		Slopes       string        `json:"slopes"`
+		Distinct     bool          `json:"distinct"`
+		Coincidences []Coincidence `json:"coincidences"`
+		Keys         int           `json:"keys"`
+		Digest       Digest        `json:"digest"`
+		Audit        Audit         `json:"audit"`
 	}{
 		Format, Version, r.Family.String(), FormatBound(r.Bound), whole(r.Slopes),
 		r.Distinct(), list, r.Keys, r.Digest, r.Audit,
@@ -111,11 +161,7 @@ func (r Report) write(w io.Writer, number func(*big.Int) string, most int) {
 			fmt.Fprintf(w, "  … and %d more\n", len(r.Coincidences)-most)
 			break
 		}
-		fmt.Fprintf(w, "  %s at", number(c.Number))
-		for _, s := range c.Slopes {
-			fmt.Fprintf(w, " %v", s)
-		}
-		fmt.Fprintln(w)
+		fmt.Fprintf(w, "  %s\n", c.text(number))
 	}
 	fmt.Fprintf(w, "keys shared   %d by different numbers, settled\n", r.Keys)
 	fmt.Fprintf(w, "digest        %v\n", r.Digest)

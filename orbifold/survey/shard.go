@@ -52,6 +52,7 @@ func (w *walker) shards(r Region, n int) ([]Shard, error) {
 	if n < 1 || n > MaxShards {
 		return nil, fmt.Errorf("survey: %d shards: want 1 … %d: %w", n, MaxShards, ErrOptions)
 	}
+	r = r.clone()
 	pieces := w.pieces(n)
 	list := make([]Shard, len(pieces))
 	for i, p := range pieces {
@@ -85,7 +86,7 @@ func ParseShard(r Region, text string) (Shard, error) {
 }
 
 // Region returns the region that the shard is part of.
-func (s Shard) Region() Region { return s.region }
+func (s Shard) Region() Region { return s.region.clone() }
 
 // Index returns the place of the shard among those of its split, from 0.
 func (s Shard) Index() int { return s.index }

@@ -15,6 +15,9 @@ import (
 // some nanoseconds and nothing is allocated; the few cases at the bound that
 // logarithms leave open are decided exactly. Memory does not depend on the region.
 func Walk(ctx context.Context, r Region, visit func(*Visit) bool) error {
+	if visit == nil {
+		return fmt.Errorf("survey: walk without a function to call: %w", ErrOptions)
+	}
 	w, err := newWalker(r)
 	if err != nil {
 		return err

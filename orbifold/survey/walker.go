@@ -37,6 +37,7 @@ func newWalker(r Region) (*walker, error) {
 	if err := r.check(); err != nil {
 		return nil, err
 	}
+	r = r.clone() // the caller may go on changing its own
 	s, err := newScale(r)
 	if err != nil {
 		return nil, err
