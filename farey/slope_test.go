@@ -39,6 +39,24 @@ func isReduced(t require.TestingT, s farey.Slope) {
 // rat is the value of a finite slope.
 func rat(s farey.Slope) *big.Rat { return new(big.Rat).SetFrac(s.Num(), s.Den()) }
 
+func TestFromIntsIsNewUpToTheEndsOfTheRange(t *testing.T) {
+	corners := []int64{0, 1, -1, 2, 3, -3, 1 << 62, -1 << 62, math.MaxInt64, -math.MaxInt64, math.MinInt64, math.MinInt64 + 2}
+	for _, p := range corners {
+		for _, q := range corners {
+			if p == 0 && q == 0 {
+				continue
+			}
+			s, err := farey.FromInts(p, q)
+			require.NoError(t, err)
+			isReduced(t, s)
+			require.Zero(t, new(big.Int).Mul(s.Num(), big.NewInt(q)).Cmp(new(big.Int).Mul(s.Den(), big.NewInt(p))), "%d/%d", p, q)
+			u, err := farey.New(big.NewInt(p), big.NewInt(q))
+			require.NoError(t, err)
+			require.True(t, s.Equal(u), "%d/%d", p, q)
+		}
+	}
+}
+
 func TestNewIsTheQuotient(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		p, q := integers().Draw(t, "p"), integers().Draw(t, "q")
