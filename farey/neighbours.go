@@ -50,7 +50,9 @@ func Mediant(s, t Slope) (Slope, error) {
 
 // Parents returns the two neighbours whose [Mediant] is s, a below and b above it:
 // a < s < b, where 1/0 as a parent of a negative slope counts as −1/0, below. (Those of
-// −1/1 are 1/0 and 0/1, although the mediant of these is 1/1.) It fails with [ErrBaseSlope] for 0/1, 1/0 and 1/1, which have none. Cost: as [Slope.Path].
+// −1/1 are 1/0 and 0/1, although the mediant of these is 1/1.) It fails with
+// [ErrBaseSlope] for 0/1, 1/0 and 1/1, which have none. Cost: as [Slope.Path], and as
+// [Path.Edge].
 func (s Slope) Parents() (a, b Slope, err error) {
 	if s.IsBase() {
 		return Slope{}, Slope{}, fmt.Errorf("farey: parents of %v: any slope but 0/1, 1/0 and 1/1 would be accepted: %w", s, ErrBaseSlope)

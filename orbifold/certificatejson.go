@@ -136,8 +136,9 @@ func (c Certificate) MarshalJSON() ([]byte, error) {
 
 // UnmarshalJSON reads what MarshalJSON writes, up to white space, and refuses
 // everything else: unknown, missing, repeated or reordered fields, integers with
-// leading zeros, unknown methods, other formats and versions, texts past MaxCertificateBytes. The error
-// wraps ErrCertificate. Whether the claims are true is for Verify to say.
+// leading zeros, unknown methods, other formats and versions, texts past
+// MaxCertificateBytes. The error wraps ErrCertificate. Whether the claims are
+// true is for Verify to say.
 func (c *Certificate) UnmarshalJSON(text []byte) error {
 	refuse := func(format string, args ...any) error {
 		return fmt.Errorf("orbifold: certificate: %s: %w", fmt.Sprintf(format, args...), ErrCertificate)

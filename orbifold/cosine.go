@@ -139,7 +139,8 @@ func (q CosineRing) Integer(x *big.Int) Cosine {
 }
 
 // Weight returns 2cos(π/order), the weight of an orbifold point of that order,
-// for an order ≥ 2 that divides the order of the ring (or 3, whose weight is 1); else the error is ErrCosine.
+// for an order ≥ 2 that divides the order of the ring, or 2 or 3, whose weights
+// are 0 and 1; else the error is ErrCosine.
 func (q CosineRing) Weight(order int) (Cosine, error) {
 	n := q.Order()
 	switch {

@@ -118,8 +118,8 @@ func (f Family) String() string {
 }
 
 // Equation returns equation (E) of the family as text, with the weights put in:
-// "x² + y² + z² + 2yz + xy = 6xyz" for (2,0,1), with x, y, z the numbers at the classes of 0/1, 1/0
-// and 1/1.
+// "x² + y² + z² + 2yz + xy = 6xyz" for (2,0,1), with x, y, z the numbers at the
+// classes of 0/1, 1/0 and 1/1.
 func (f Family) Equation() string {
 	var b strings.Builder
 	b.WriteString("x² + y² + z²")

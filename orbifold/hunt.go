@@ -11,16 +11,18 @@ import (
 	"example.com/onecusp/farey"
 )
 
-// hunt looks for the slopes with logarithms of their numbers in a window, without
-// visiting all slopes below it.
+// hunt looks for the slopes with logarithms of their numbers in a window,
+// without visiting all slopes below it.
 //
 // Every slope r that is not a base slope has an older and a newer parent; it
 // lies in the fan of the older one, A, past the two arcs with which A was made:
 // r = L + i·A or R + i·A with i ≥ 2, L and R the parents of A (for a base slope
-// A the other two base slopes). Along these two sides of a fan numbers grow, so
-// the places where a side passes through the window are found by a division. And N_r > N_A², since
-// t ≥ 3·N_A: only slopes A with N_A up to the square root of the window's end
-// are visited, a quarter of all.
+// A the other two base slopes). Only the slopes in front of the base triangle
+// have i = 1; they are looked at by themselves. Along these two sides of a fan
+// numbers grow, so the places where a side passes through the window are found
+// by a division. And N_r > N_A²: r is y_{i+1} = t·y_i − c·N_A − y_{i−1} with y_i
+// above N_A and y_{i−1}, and t − c ≥ 3·N_A. So only slopes A with N_A up to the
+// square root of the window's end are visited, a quarter of all.
 //
 // Logarithms are integers in units of u = 2^−shift. A number is exact when
 // K·N_a·N_b < 2⁵³ for its parents a and b, and its logarithm is off by at most
@@ -59,8 +61,8 @@ type prey struct {
 	p, q   int64
 }
 
-// trail is an oriented edge (a, b) with c behind it. f is that of the flip that made the newer
-// of a and b.
+// trail is an oriented edge (a, b) with c behind it. f is that of the flip that
+// made the newer of a and b.
 type trail struct {
 	a, b, c prey
 	f       float64
@@ -321,8 +323,8 @@ func (h *hunt) report(p, q, log int64, found func(farey.Slope)) {
 	}
 }
 
-// ends returns the slopes at the ends of what lies in front of an edge; low is false when it reaches down
-// to −1/0.
+// ends returns the slopes at the ends of what lies in front of an edge; low is
+// true when it reaches down to −1/0.
 func (e *trail) ends() (a, b farey.Slope, low bool) {
 	a, _ = farey.FromInts(e.a.p, e.a.q)
 	b, _ = farey.FromInts(e.b.p, e.b.q)
