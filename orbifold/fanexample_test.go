@@ -49,7 +49,7 @@ func ExampleFan_Ratio() {
 	fmt.Printf("%v, between %.20f and %.20f\n", ratio, lo, hi)
 	// Output:
 	// [1 5 29 169 985 5741 33461]
-	// 3 + 1/2·√32, between 5.82842712474619009760 and 5.82842712474619009760
+	// (3 + √8)/1, between 5.82842712474619009760 and 5.82842712474619009760
 }
 
 func ExampleFan_Recurrence() {
@@ -79,7 +79,7 @@ func ExampleFan_ClosedForm() {
 	y, _ := form.Term(6)
 	fmt.Println(y)
 	// Output:
-	// α·λⁿ + α′·λ⁻ⁿ + e with α = 1/3 − 1/21·√21, λ = 5/2 + 1/2·√21, e = 1/3
+	// α·λⁿ + α′·λ⁻ⁿ + e with α = 1/3 − 1/21·√21, λ = (5 + √21)/2, e = 1/3
 	// 1393
 }
 

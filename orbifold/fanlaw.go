@@ -6,6 +6,7 @@ import (
 	"math/bits"
 
 	"example.com/onecusp/contfrac"
+	"example.com/onecusp/orbifold/linear"
 )
 
 // Lucas returns the terms U_n and V_n of the Lucas sequences of t and 1:
@@ -82,55 +83,55 @@ func (f Fan) lucasFits(n uint64, t *big.Int) error {
 // are not zero, t² − 4 being no square, and a part of period two
 // that is zero only for c = c' = 0 and constant only for c = c'. Errors: those of
 // Family.Number for the first terms, ErrTooLarge for V.
-func (f Fan) Recurrence(step int64) (Recurrence, error) {
+func (f Fan) Recurrence(step int64) (linear.Recurrence, error) {
 	if step == 0 {
-		return Recurrence{}, fmt.Errorf("orbifold: recurrence of %v with step 0: %w", f, ErrStep)
+		return linear.Recurrence{}, fmt.Errorf("orbifold: recurrence of %v with step 0: %w", f, ErrStep)
 	}
 	t, err := f.Trace()
 	if err != nil {
-		return Recurrence{}, err
+		return linear.Recurrence{}, err
 	}
 	n := abs64(step)
 	if err := f.lucasFits(n, t); err != nil {
-		return Recurrence{}, err
+		return linear.Recurrence{}, err
 	}
 	_, v, err := Lucas(n, t)
 	if err != nil {
-		return Recurrence{}, err
+		return linear.Recurrence{}, err
 	}
 	one := new(big.Rat).SetInt64(1)
-	p := NewPolynomial(one, new(big.Rat).SetInt(v.Neg(v)), one)
+	p := linear.NewPolynomial(one, new(big.Rat).SetInt(v.Neg(v)), one)
 	c, d := f.Weights()
 	if c != 0 || d != 0 {
-		p = PolynomialOf(-1, 1).Mul(p)
+		p = linear.PolynomialOf(-1, 1).Mul(p)
 	}
 	if c != d && n%2 == 1 {
-		p = PolynomialOf(1, 1).Mul(p)
+		p = linear.PolynomialOf(1, 1).Mul(p)
 	}
 	initial := make([]*big.Int, p.Degree())
 	for i := range initial {
 		j := new(big.Int).Mul(big.NewInt(step), big.NewInt(int64(i)))
 		if initial[i], err = f.Term(j); err != nil {
-			return Recurrence{}, err
+			return linear.Recurrence{}, err
 		}
 	}
-	return NewRecurrence(p, initial...)
+	return linear.NewRecurrence(p, initial...)
 }
 
 // Ratio returns λ = (t + √(t²−4))/2, the limit of y_{n+1}/y_n as n grows and of
-// y_{n−1}/y_n as n falls, as a surd; Surd.Enclosure gives digits. Errors are
-// those of Trace.
-func (f Fan) Ratio() (Surd, error) {
+// y_{n−1}/y_n as n falls. Errors are those of Trace.
+func (f Fan) Ratio() (contfrac.Surd, error) {
 	t, err := f.Trace()
 	if err != nil {
-		return Surd{}, err
+		return contfrac.Surd{}, err
 	}
 	return unitOf(t), nil
 }
 
-// unitOf returns λ for the trace t.
-func unitOf(t *big.Int) Surd {
-	return Surd{new(big.Rat).SetFrac(t, big.NewInt(2)), big.NewRat(1, 2), discriminant(t)}
+// unitOf returns λ for the trace t ≥ 3.
+func unitOf(t *big.Int) contfrac.Surd {
+	unit, _ := contfrac.NewSurd(t, discriminant(t), big.NewInt(2)) // t² − 4 is no square
+	return unit
 }
 
 // discriminant returns t² − 4.
@@ -148,7 +149,7 @@ func discriminant(t *big.Int) *big.Int {
 // zero value is the closed form of the zero Fan.
 type ClosedForm struct {
 	trace     *big.Int // nil for the zero value
-	alpha     Surd
+	a, b      *big.Rat // α = a + b·√(t²−4)
 	even, odd *big.Rat
 	limit     int64
 }
@@ -186,7 +187,7 @@ func (f Fan) ClosedForm() (ClosedForm, error) {
 	a := new(big.Rat).Mul(y[0], big.NewRat(1, 2))
 	b := new(big.Rat).Mul(a, new(big.Rat).SetInt(t))
 	b.Sub(y[1], b).Quo(b, new(big.Rat).SetInt(d))
-	form.alpha = Surd{a, b, d}
+	form.a, form.b = a, b
 	return form, nil
 }
 
@@ -199,12 +200,13 @@ func (c ClosedForm) value() ClosedForm {
 }
 
 // Unit returns λ.
-func (c ClosedForm) Unit() Surd { return unitOf(c.value().trace) }
+func (c ClosedForm) Unit() contfrac.Surd { return unitOf(c.value().trace) }
 
-// Alpha returns α; its conjugate is α′.
-func (c ClosedForm) Alpha() Surd {
-	a, b, d := c.value().alpha.Parts()
-	return Surd{a, b, d}
+// Alpha returns the rational numbers a and b of α = a + b·√(t²−4); the
+// conjugate α′ is a − b·√(t²−4).
+func (c ClosedForm) Alpha() (a, b *big.Rat) {
+	c = c.value()
+	return new(big.Rat).Set(c.a), new(big.Rat).Set(c.b)
 }
 
 // Resting returns e_n for even and for odd n.
@@ -231,8 +233,8 @@ func (c ClosedForm) Term(n int64) (*big.Int, error) {
 	if n < 0 {
 		u.Neg(u)
 	}
-	y := new(big.Rat).Mul(c.alpha.b, new(big.Rat).SetInt(u.Mul(u, c.alpha.d)))
-	y.Add(y, new(big.Rat).Mul(c.alpha.a, new(big.Rat).SetInt(v)))
+	y := new(big.Rat).Mul(c.b, new(big.Rat).SetInt(u.Mul(u, discriminant(c.trace))))
+	y.Add(y, new(big.Rat).Mul(c.a, new(big.Rat).SetInt(v)))
 	if n%2 == 0 {
 		y.Add(y, c.even)
 	} else {
@@ -256,12 +258,19 @@ func (c ClosedForm) Format(s fmt.State, verb rune) {
 
 func (c ClosedForm) text(integer func(*big.Int) string) string {
 	c = c.value()
-	where := " with α = " + c.alpha.text(integer) + ", λ = " + unitOf(c.trace).text(integer)
 	ratio := func(r *big.Rat) string {
-		var sum sumText
-		sum.add(r, integer, "")
-		return sum.String()
+		if r.IsInt() {
+			return integer(r.Num())
+		}
+		return integer(r.Num()) + "/" + integer(r.Denom())
 	}
+	sign := " + "
+	if c.b.Sign() < 0 {
+		sign = " − "
+	}
+	root := "√" + integer(discriminant(c.trace))
+	where := " with α = " + ratio(c.a) + sign + ratio(new(big.Rat).Abs(c.b)) + "·" + root +
+		", λ = (" + integer(c.trace) + " + " + root + ")/2"
 	switch {
 	case c.even.Sign() == 0 && c.odd.Sign() == 0:
 		return "α·λⁿ + α′·λ⁻ⁿ" + where

@@ -10,8 +10,10 @@ import (
 	"github.com/stretchr/testify/require"
 	"pgregory.net/rapid"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
+	"example.com/onecusp/orbifold/linear"
 )
 
 // fanTerms returns y₀, y_step, y_{2·step}, … .
@@ -89,7 +91,7 @@ func TestFanCharacteristicPolynomialsFactor(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		f := fans().Draw(t, "fan")
 		p := must(f.Recurrence(rapid.Int64Range(1, 4).Draw(t, "step")))(t).Characteristic()
-		product := orbifold.PolynomialOf(1)
+		product := linear.PolynomialOf(1)
 		for _, x := range p.Factors() {
 			assert.True(t, x.Irreducible)
 			assert.Equal(t, 1, x.Multiplicity)
@@ -131,9 +133,10 @@ func TestClosedFormRestsAtASolution(t *testing.T) {
 func TestClosedFormLimits(t *testing.T) {
 	var zero orbifold.ClosedForm
 	assertEqualInt(t, big.NewInt(34), must(zero.Term(5))(t))
-	assert.Equal(t, "α·λⁿ + α′·λ⁻ⁿ with α = 1/2 − 1/10·√5, λ = 3/2 + 1/2·√5", zero.String())
-	assert.Equal(t, "3/2 + 1/2·√5", zero.Unit().String())
-	assert.Equal(t, "1/2 − 1/10·√5", zero.Alpha().String())
+	assert.Equal(t, "α·λⁿ + α′·λ⁻ⁿ with α = 1/2 − 1/10·√5, λ = (3 + √5)/2", zero.String())
+	assert.True(t, zero.Unit().Equal(must(contfrac.SurdOf(3, 5, 2))(t)))
+	a, b := zero.Alpha()
+	assert.Equal(t, "1/2 -1/10", a.String()+" "+b.String())
 	for _, n := range []int64{math.MaxInt64, math.MinInt64, 1 << 40} {
 		_, err := zero.Term(n)
 		assert.ErrorIs(t, err, orbifold.ErrTooLarge)
@@ -172,10 +175,6 @@ func TestRatioIsTheLimit(t *testing.T) {
 			assert.Negative(t, new(big.Float).Sub(lo, slack).Cmp(q))
 			assert.Positive(t, new(big.Float).Add(hi, slack).Cmp(q))
 		}
-		a, b, d := lambda.Parts()
-		norm := new(big.Rat).Mul(a, a)
-		norm.Sub(norm, new(big.Rat).Mul(new(big.Rat).Mul(b, b), new(big.Rat).SetInt(d)))
-		assert.Equal(t, "1/1", norm.String())
 	})
 }
 
@@ -207,4 +206,60 @@ func TestLucasBounds(t *testing.T) {
 	u, v, err = orbifold.Lucas(3, nil)
 	require.NoError(t, err)
 	assert.Equal(t, "-1 0", fmt.Sprint(u, v))
+}
+
+// TestFanTypesShareNothing spoils what the types round fans hand out and what
+// they were made of.
+func TestFanTypesShareNothing(t *testing.T) {
+	f := fanAt(t, orbifold.MustNew(2, 0, 1), farey.MustParse("2/5"), 3)
+	form := must(f.ClosedForm())(t)
+	lambda := must(f.Ratio())(t)
+	show := func() string {
+		return fmt.Sprint(f, form, lambda, form.Unit(), f.Waist(), must(f.Term(big.NewInt(3)))(t))
+	}
+	want := show()
+	bad := big.NewRat(-99, 7)
+	a, b := form.Alpha()
+	a.Set(bad)
+	b.Set(bad)
+	e, o := form.Resting()
+	e.Set(bad)
+	o.Set(bad)
+	n := big.NewInt(3)
+	for _, x := range []*big.Int{f.Waist(), must(f.Term(n))(t), must(f.Trace())(t), must(form.Term(3))(t), must(f.TermMod(n, big.NewInt(7)))(t)} {
+		x.SetInt64(-99)
+	}
+	i, _ := f.Index(f.Slope(n))
+	i.SetInt64(-99)
+	assert.Equal(t, "3", n.String(), "an argument was changed")
+	assert.Equal(t, want, show())
+}
+
+// TestRatioAndAlphaSatisfyTheirEquations: λ² − tλ + 1 = 0, and twice the rational part of
+// α is y₀ less the resting part.
+func TestRatioAndAlphaSatisfyTheirEquations(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := fans().Draw(t, "fan")
+		form, trace := must(f.ClosedForm())(t), must(f.Trace())(t)
+		lambda := must(f.Ratio())(t)
+		assert.True(t, lambda.Equal(form.Unit()))
+		// λ = (P + √D)/Q in lowest terms: its trace 2P/Q is t and its norm 1.
+		p, q := lambda.P(), lambda.Q()
+		assertEqualInt(t, new(big.Int).Mul(trace, q), new(big.Int).Lsh(p, 1))
+		norm := new(big.Int).Mul(p, p)
+		assertEqualInt(t, new(big.Int).Mul(q, q), norm.Sub(norm, lambda.D()))
+		a, _ := form.Alpha()
+		even, _ := form.Resting()
+		a.Add(a, a).Add(a, even)
+		assert.Zero(t, a.Cmp(new(big.Rat).SetInt(must(f.Term(new(big.Int)))(t))))
+	})
+}
+
+func TestLucasKeepsItsArgument(t *testing.T) {
+	x := big.NewInt(12)
+	u, v, err := orbifold.Lucas(1, x)
+	require.NoError(t, err)
+	u.SetInt64(-99)
+	v.SetInt64(-99)
+	assert.Equal(t, "12", x.String())
 }

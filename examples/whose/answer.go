@@ -8,6 +8,7 @@ import (
 
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
+	"example.com/onecusp/orbifold/linear"
 	"example.com/onecusp/orbifold/recognize"
 )
 
@@ -204,7 +205,7 @@ func (a *answer) askSequence(ctx context.Context, s recognize.Sequence, o option
 }
 
 // describe writes down a recurrence.
-func describe(r orbifold.Recurrence, verdict recognize.Verdict) recurrence {
+func describe(r linear.Recurrence, verdict recognize.Verdict) recurrence {
 	d := recurrence{Verdict: verdict.String()}
 	if verdict != recognize.Found {
 		return d

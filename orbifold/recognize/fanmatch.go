@@ -10,6 +10,7 @@ import (
 	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
+	"example.com/onecusp/orbifold/linear"
 )
 
 // FanMatch is a fan that has the terms of a sequence in arithmetic
@@ -31,7 +32,7 @@ type FanMatch struct {
 	// Rule is the minimal recurrence of the infinite sequence, a theorem about the
 	// fan; its first terms were computed at the slopes, and all terms given
 	// satisfy it.
-	Rule orbifold.Recurrence
+	Rule linear.Recurrence
 }
 
 // Slope returns the slope of term j.
@@ -54,7 +55,7 @@ func (m FanMatch) Check(ctx context.Context, s Sequence) error {
 			return err
 		}
 		if y.Cmp(a) != 0 {
-			return fmt.Errorf("recognize: term %d is %s, but %s at slope %v: %w", j, brief(a), brief(y), m.Slope(int64(j)), orbifold.ErrNotRecurrent)
+			return fmt.Errorf("recognize: term %d is %s, but %s at slope %v: %w", j, brief(a), brief(y), m.Slope(int64(j)), linear.ErrNotRecurrent)
 		}
 	}
 	return nil

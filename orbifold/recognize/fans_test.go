@@ -13,6 +13,7 @@ import (
 
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
+	"example.com/onecusp/orbifold/linear"
 	"example.com/onecusp/orbifold/recognize"
 )
 
@@ -225,7 +226,7 @@ func TestFansErrors(t *testing.T) {
 	// The check of a match notices other terms.
 	s := sequenceOf(t, 1, 2, 5, 13, 34)
 	m := must(s.Fans(t.Context(), recognize.Options{}))(t).Matches[0]
-	assert.ErrorIs(t, m.Check(t.Context(), sequenceOf(t, 1, 2, 5, 14)), orbifold.ErrNotRecurrent)
+	assert.ErrorIs(t, m.Check(t.Context(), sequenceOf(t, 1, 2, 5, 14)), linear.ErrNotRecurrent)
 	assert.ErrorIs(t, m.Check(ctx, s), context.Canceled)
 }
 

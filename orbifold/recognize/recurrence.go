@@ -5,7 +5,7 @@ import (
 	"fmt"
 	"math/big"
 
-	"example.com/onecusp/orbifold"
+	"example.com/onecusp/orbifold/linear"
 )
 
 // Recurrence is an answer of Sequence.Recurrence.
@@ -14,7 +14,7 @@ type Recurrence struct {
 	// recurrence.
 	Verdict Verdict
 	// Rule is the recurrence with its first terms; order 0 when undecided.
-	Rule orbifold.Recurrence
+	Rule linear.Recurrence
 	// Surplus is the number of terms that confirm it: those past the 2·order that
 	// determine it. At least 1 when found.
 	Surplus int
@@ -120,19 +120,19 @@ func (l *lifting) add(c []uint64, p uint64) {
 // terms. It is the shortest then: modulo a prime the shortest of twice as many
 // terms or more as its length is unique, so the Hankel matrix of that many
 // rows is not singular there, nor over Q.
-func (l *lifting) rule(ctx context.Context, terms []*big.Int) (orbifold.Recurrence, bool) {
+func (l *lifting) rule(ctx context.Context, terms []*big.Int) (linear.Recurrence, bool) {
 	d := len(l.c) - 1
 	c := make([]*big.Rat, d+1)
 	for i, x := range l.c {
 		r, ok := rational(x, l.modulus)
 		if !ok {
-			return orbifold.Recurrence{}, false
+			return linear.Recurrence{}, false
 		}
 		c[d-i] = r
 	}
-	rule, err := orbifold.NewRecurrence(orbifold.NewPolynomial(c...), terms[:d]...)
+	rule, err := linear.NewRecurrence(linear.NewPolynomial(c...), terms[:d]...)
 	if err != nil || rule.CheckContext(ctx, terms) != nil {
-		return orbifold.Recurrence{}, false
+		return linear.Recurrence{}, false
 	}
 	return rule, true
 }

@@ -9,7 +9,7 @@ import (
 	"github.com/stretchr/testify/require"
 	"pgregory.net/rapid"
 
-	"example.com/onecusp/orbifold"
+	"example.com/onecusp/orbifold/linear"
 	"example.com/onecusp/orbifold/recognize"
 )
 
@@ -189,5 +189,5 @@ func TestFactorsOfAFoundRecurrence(t *testing.T) {
 	factors := r.Rule.Characteristic().Factors()
 	require.Len(t, factors, 1)
 	assert.False(t, factors[0].Irreducible)
-	assert.True(t, factors[0].Polynomial.Equal(orbifold.PolynomialOf(1, -3, 1).Mul(orbifold.PolynomialOf(-2, 1))))
+	assert.True(t, factors[0].Polynomial.Equal(linear.PolynomialOf(1, -3, 1).Mul(linear.PolynomialOf(-2, 1))))
 }

@@ -1,4 +1,4 @@
-package orbifold
+package linear
 
 import (
 	"context"
@@ -37,15 +37,15 @@ type Recurrence struct {
 func NewRecurrence(characteristic Polynomial, initial ...*big.Int) (Recurrence, error) {
 	d := characteristic.Degree()
 	if d < 0 {
-		return Recurrence{}, fmt.Errorf("orbifold: recurrence with characteristic polynomial 0: want another polynomial: %w", ErrRecurrence)
+		return Recurrence{}, fmt.Errorf("linear: recurrence with characteristic polynomial 0: want another polynomial: %w", ErrRecurrence)
 	}
 	if len(initial) != d {
-		return Recurrence{}, fmt.Errorf("orbifold: recurrence of order %d with %d first terms: want %d: %w", d, len(initial), d, ErrRecurrence)
+		return Recurrence{}, fmt.Errorf("linear: recurrence of order %d with %d first terms: want %d: %w", d, len(initial), d, ErrRecurrence)
 	}
 	first := make([]*big.Int, d)
 	for i, a := range initial {
 		if a == nil {
-			return Recurrence{}, fmt.Errorf("orbifold: recurrence without the first term %d: %w", i, ErrRecurrence)
+			return Recurrence{}, fmt.Errorf("linear: recurrence without the first term %d: %w", i, ErrRecurrence)
 		}
 		first[i] = new(big.Int).Set(a)
 	}
@@ -111,16 +111,18 @@ func (r Recurrence) Check(terms []*big.Int) error {
 
 // CheckContext is Check that stops when ctx ends, with its error.
 func (r Recurrence) CheckContext(ctx context.Context, terms []*big.Int) error {
-	ctx = contextOf(ctx)
+	if ctx == nil {
+		ctx = context.Background()
+	}
 	d := len(r.initial)
 	factors, denominator := r.cleared()
 	sum, product := new(big.Int), new(big.Int)
 	for n, a := range terms {
 		if a == nil {
-			return fmt.Errorf("orbifold: term %d is missing: %w", n, ErrNotRecurrent)
+			return fmt.Errorf("linear: term %d is missing: %w", n, ErrNotRecurrent)
 		}
 		if err := ctx.Err(); err != nil {
-			return fmt.Errorf("orbifold: check of a recurrence: %w", err)
+			return fmt.Errorf("linear: check of a recurrence: %w", err)
 		}
 		same := true
 		if n < d {
@@ -135,7 +137,7 @@ func (r Recurrence) CheckContext(ctx context.Context, terms []*big.Int) error {
 			same = sum.Sign() == 0
 		}
 		if !same {
-			return fmt.Errorf("orbifold: term %d is %s, which %v does not give: %w", n, brief(a), r, ErrNotRecurrent)
+			return fmt.Errorf("linear: term %d is %s, which %v does not give: %w", n, contfrac.Abbreviate(a), r, ErrNotRecurrent)
 		}
 	}
 	return nil
@@ -189,61 +191,10 @@ func (r Recurrence) text(integer func(*big.Int) string) string {
 	for i := len(r.initial) - 1; i >= 0; i-- {
 		c := new(big.Rat).Neg(r.characteristic.c[i])
 		symbol := fmt.Sprintf("a(n−%d)", len(r.initial)-i)
-		if c.IsInt() && c.Num().CmpAbs(unit) != 0 {
+		if c.IsInt() && c.Num().CmpAbs(one) != 0 {
 			symbol = "·" + symbol
 		}
 		sum.add(c, integer, symbol)
 	}
 	return "a(n) = " + sum.String()
-}
-
-// RationalFunction is a quotient of two polynomials in lowest terms, with a
-// denominator of value 1 at 0: the generating function of a sequence with a
-// linear recurrence. It is immutable; the zero value is 0.
-type RationalFunction struct{ num, den Polynomial }
-
-// lowestTerms returns num/den for den(0) ≠ 0.
-func lowestTerms(num, den Polynomial) RationalFunction {
-	g := num.gcd(den)
-	num, _ = num.quoRem(g)
-	den, _ = den.quoRem(g)
-	s := new(big.Rat).Inv(den.at(0))
-	return RationalFunction{num.scale(s), den.scale(s)}
-}
-
-// Numerator returns the numerator.
-func (f RationalFunction) Numerator() Polynomial { return f.num }
-
-// Denominator returns the denominator, of value 1 at 0.
-func (f RationalFunction) Denominator() Polynomial {
-	if f.den.Degree() < 0 {
-		return PolynomialOf(1)
-	}
-	return f.den
-}
-
-// Equal tells whether two rational functions are the same.
-func (f RationalFunction) Equal(g RationalFunction) bool {
-	return f.num.Equal(g.num) && f.Denominator().Equal(g.Denominator())
-}
-
-// String writes both sides in x, lowest power first: "(1 − x)/(1 − 3x + x²)".
-func (f RationalFunction) String() string { return f.text((*big.Int).String) }
-
-// Format writes the function whole for %s, and with long coefficients
-// shortened for %v.
-func (f RationalFunction) Format(s fmt.State, verb rune) {
-	if verb == 'v' {
-		fmt.Fprint(s, f.text(contfrac.Abbreviate))
-		return
-	}
-	fmt.Fprint(s, f.String())
-}
-
-func (f RationalFunction) text(integer func(*big.Int) string) string {
-	num := f.num.text("x", integer, true)
-	if f.den.Degree() < 1 {
-		return num
-	}
-	return "(" + num + ")/(" + f.den.text("x", integer, true) + ")"
 }

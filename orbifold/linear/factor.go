@@ -1,4 +1,4 @@
-package orbifold
+package linear
 
 import "math/big"
 

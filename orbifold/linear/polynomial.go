@@ -1,4 +1,4 @@
-package orbifold
+package linear
 
 import (
 	"fmt"
@@ -183,7 +183,7 @@ func (p Polynomial) reversed(n int) Polynomial {
 // steps over Q swell, so they are made only when the same steps modulo a word
 // prime do not settle that there is no common factor.
 func (p Polynomial) gcd(o Polynomial) Polynomial {
-	if p.coprimeModulo(o, Primes()[0]) {
+	if p.coprimeModulo(o, 1<<61-1) {
 		return PolynomialOf(1)
 	}
 	p, o = p.monic(), o.monic()
@@ -203,14 +203,14 @@ func (p Polynomial) coprimeModulo(o Polynomial, m uint64) bool {
 	if !ok1 || !ok2 {
 		return false
 	}
-	r := wordResidues{m}
+	r := field{m}
 	for len(y) > 0 {
 		inverse := inverseModulo(y[len(y)-1], m)
 		for len(x) >= len(y) {
-			f := r.Mul(x[len(x)-1], inverse)
+			f := r.mul(x[len(x)-1], inverse)
 			shift := len(x) - len(y)
 			for i, c := range y {
-				x[shift+i] = r.Sub(x[shift+i], r.Mul(f, c))
+				x[shift+i] = r.sub(x[shift+i], r.mul(f, c))
 			}
 			for len(x) > 0 && x[len(x)-1] == 0 {
 				x = x[:len(x)-1]
@@ -225,26 +225,26 @@ func (p Polynomial) coprimeModulo(o Polynomial, m uint64) bool {
 // or the leading coefficient vanishes there.
 func (p Polynomial) modulo(m uint64) ([]uint64, bool) {
 	c := make([]uint64, len(p.c))
-	r := wordResidues{m}
+	r := field{m}
 	for i, x := range p.c {
-		d := r.From(x.Denom())
+		d := r.from(x.Denom())
 		if d == 0 {
 			return nil, false
 		}
-		c[i] = r.Mul(r.From(x.Num()), inverseModulo(d, m))
+		c[i] = r.mul(r.from(x.Num()), inverseModulo(d, m))
 	}
 	return c, len(c) == 0 || c[len(c)-1] != 0
 }
 
 // inverseModulo returns 1/x modulo the prime m, for x not 0 there.
 func inverseModulo(x, m uint64) uint64 {
-	r := wordResidues{m}
+	r := field{m}
 	y := uint64(1)
 	for e := m - 2; e > 0; e >>= 1 {
 		if e&1 == 1 {
-			y = r.Mul(y, x)
+			y = r.mul(y, x)
 		}
-		x = r.Mul(x, x)
+		x = r.mul(x, x)
 	}
 	return y
 }
