@@ -7,7 +7,7 @@
 // exactly, at any Farey slope, by four independent routes that must agree;
 // finds the slopes of a number; and writes certificates that others can check
 // without it. The package itself is empty; the work is done in these rooms, each
-// of which uses those above it only:
+// of which uses those above it only (orbifold also uses orbifold/linear):
 //
 //   - contfrac: continued fractions, continuants, words in L and R, 2×2 integer
 //     matrices, fast multiplication;
@@ -19,6 +19,7 @@
 //     tree, fans, words, graphs, matrices, Laurent expansions, certificates,
 //     identification;
 //   - orbifold/spectrum: forms and Lagrange values, and the way back from them;
+//   - orbifold/linear: linear recurrences and their generating functions;
 //   - orbifold/recognize: integers and sequences back to families, slopes and
 //     recurrences;
 //   - orbifold/survey: sweeps over whole regions, with proof;
