@@ -189,7 +189,7 @@ func (x Surd) Cmp(y Surd) int {
 		return rootSign(a, new(big.Int).Add(b, c), e.d)
 	}
 	u, v := rootSign(a, b, e.d), c.Sign()
-	if u == v || u == 0 {
+	if u == v { // u is not 0, since √D is irrational
 		return v
 	}
 	// Opposite signs: compare (a + b√D)² with c²D'.
