@@ -36,7 +36,7 @@ func TestAuditBalances(t *testing.T) {
 		checkAudit(t, a, d)
 	})
 	for _, f := range tenFamilies() {
-		a, d, err := Check(context.Background(), f, PowerOfTen(100), Options{})
+		a, d, err := Check(context.Background(), f, PowerOfTen(far(100)), Options{})
 		require.NoError(t, err)
 		checkAudit(t, a, d)
 	}

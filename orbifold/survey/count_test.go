@@ -48,7 +48,7 @@ func logOf(n *big.Int) float64 {
 // Farther out, where most slopes are counted and not visited, Count agrees with the walk.
 func TestCountIsTheNumberOfVisits(t *testing.T) {
 	for _, f := range tenFamilies() {
-		for _, d := range []int{200, 500} {
+		for _, d := range []int{far(200), far(500)} {
 			q, err := Sweep(context.Background(), Up(f, PowerOfTen(d)), Tally(), Options{})
 			require.NoError(t, err)
 			assert.Equal(t, int64(q.Slopes), count(t, f, PowerOfTen(d)), "%v to 10^%d", f, d)

@@ -70,7 +70,7 @@ func TestDistinctFindsAllCoincidences(t *testing.T) {
 		assert.True(t, slices.IsSortedFunc(r.Coincidences, func(a, b Coincidence) int { return a.Number.Cmp(b.Number) }))
 	}
 	for _, f := range tenFamilies() {
-		check(t, f, PowerOfTen(45))
+		check(t, f, PowerOfTen(far(45)))
 	}
 	rapid.Check(t, func(t *rapid.T) {
 		f := families().Draw(t, "family")
@@ -101,10 +101,10 @@ func TestMarkovNumbersAreDistinct(t *testing.T) {
 		r, err := Distinct(context.Background(), orbifold.Family{}, bound, Options{})
 		require.NoError(t, err)
 		assert.True(t, r.Distinct())
+		if bound.BitLen() > 100 {
+			assert.Equal(t, "1046858", r.Slopes.String())
+		}
 	}
-	r, err := Distinct(context.Background(), orbifold.Family{}, new(big.Int).Sub(fibonacci(5001), big.NewInt(1)), Options{})
-	require.NoError(t, err)
-	assert.Equal(t, "1046858", r.Slopes.String())
 }
 
 // The report is the same to the byte for any number of workers, memory budget and size of
@@ -116,7 +116,7 @@ func TestReportIsTheSameForEveryWay(t *testing.T) {
 			{0, bucketKeys, maxBuckets}, {1, 1, 1 << 20}, {2, 1 << 30, 1}, {3, 1000, 3}, {5, 64, 100_000}, {2, 2000, 40},
 		} {
 			tune(t, way.keys, way.buckets)
-			bound := PowerOfTen(150)
+			bound := PowerOfTen(far(150))
 			if way.keys == 1000 {
 				tune(t, 5000, 3)
 			}
@@ -263,7 +263,7 @@ func golden(t *testing.T, name string, got []byte) {
 func TestHelperSurvey(t *testing.T) {
 	file, kind := os.Getenv("ONECUSP_SURVEY_FILE"), os.Getenv("ONECUSP_SURVEY_KIND")
 	tune(t, 1<<12, 16)
-	digits := 900
+	digits := far(900)
 	if file == "" {
 		file, digits = filepath.Join(t.TempDir(), "checkpoint"), 60
 	}
@@ -300,7 +300,7 @@ func survey(kind, file string, digits int) ([]byte, error) {
 func TestKilledSurveysGoOn(t *testing.T) {
 	for _, kind := range []string{"distinct", "sweep"} {
 		tune(t, 1<<12, 16)
-		want, err := survey(kind, "", 900)
+		want, err := survey(kind, "", far(900))
 		require.NoError(t, err)
 		file := filepath.Join(t.TempDir(), "checkpoint")
 		random := rand.New(rand.NewPCG(1, uint64(time.Now().UnixNano())))
@@ -336,7 +336,7 @@ func TestKilledSurveysGoOn(t *testing.T) {
 // A survey that is cancelled at random moments goes on with other workers and memory.
 func TestCancelledSurveyGoesOn(t *testing.T) {
 	tune(t, 1<<11, 32)
-	f, bound := orbifold.MustNew(1, 5, 1), PowerOfTen(700)
+	f, bound := orbifold.MustNew(1, 5, 1), PowerOfTen(far(700))
 	want, err := Distinct(context.Background(), f, bound, Options{})
 	require.NoError(t, err)
 	file := filepath.Join(t.TempDir(), "checkpoint")

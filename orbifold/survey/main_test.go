@@ -3,6 +3,7 @@ package survey
 import (
 	"flag"
 	"fmt"
+	"math"
 	"os"
 	"strconv"
 	"testing"
@@ -26,6 +27,10 @@ func TestMain(m *testing.M) {
 	_ = flag.Set("rapid.nofailfile", "true")
 	os.Exit(m.Run())
 }
+
+// far returns a number of digits for a bound, such that the slopes below it are fewer when
+// less effort is asked for, about in proportion.
+func far(digits int) int { return max(int(float64(digits)*min(math.Sqrt(effort), 1)), 20) }
 
 // scaled returns n times the effort, at least 10.
 func scaled(n int) int { return max(int(float64(n)*effort), 10) }

@@ -50,7 +50,7 @@ func TestSearchIsAFilter(t *testing.T) {
 
 // Odd Markov numbers are ≡ 1 mod 4: OEIS A002559, comments. A counterexample would be a hit.
 func TestOddMarkovNumbersAre1Modulo4(t *testing.T) {
-	hits, err := Search(context.Background(), Up(orbifold.Family{}, PowerOfTen(1500)), func(v *Visit) bool {
+	hits, err := Search(context.Background(), Up(orbifold.Family{}, PowerOfTen(far(1500))), func(v *Visit) bool {
 		return v.Mod64()%2 == 1 && v.Mod64()%4 != 1
 	}, Options{})
 	require.NoError(t, err)

@@ -107,7 +107,7 @@ func TestShardNamesAreStable(t *testing.T) {
 // The loads of shards are near to the truth, and even.
 func TestShardsAreBalanced(t *testing.T) {
 	for _, f := range tenFamilies()[:9] {
-		r := Up(f, PowerOfTen(600))
+		r := Up(f, PowerOfTen(far(600)))
 		shards, err := Split(r, 100)
 		require.NoError(t, err)
 		total, largest := 0.0, 0.0
@@ -226,11 +226,11 @@ func TestShardsAreRefused(t *testing.T) {
 func TestProgressIsReported(t *testing.T) {
 	for _, run := range []func(Options) error{
 		func(o Options) error {
-			_, err := Sweep(context.Background(), Up(orbifold.Family{}, PowerOfTen(4000)), Tally(), o)
+			_, err := Sweep(context.Background(), Up(orbifold.Family{}, PowerOfTen(far(4000))), Tally(), o)
 			return err
 		},
 		func(o Options) error {
-			_, err := Distinct(context.Background(), orbifold.Family{}, PowerOfTen(2000), o)
+			_, err := Distinct(context.Background(), orbifold.Family{}, PowerOfTen(far(2000)), o)
 			return err
 		},
 	} {
@@ -251,7 +251,7 @@ func TestProgressIsReported(t *testing.T) {
 
 // A sweep that is cancelled again and again goes on from its checkpoint, with any workers.
 func TestCancelledSweepGoesOn(t *testing.T) {
-	r := Up(orbifold.MustNew(2, 0, 1), PowerOfTen(500))
+	r := Up(orbifold.MustNew(2, 0, 1), PowerOfTen(far(500)))
 	want, err := Sweep(context.Background(), r, Tally(), Options{})
 	require.NoError(t, err)
 	file := filepath.Join(t.TempDir(), "checkpoint")

@@ -77,7 +77,7 @@ func TestWalkIsTheRegion(t *testing.T) {
 // Enclosures far out contain the logarithm that LogBig has, and are narrow.
 func TestLogarithmsOfTheWalkAreEnclosures(t *testing.T) {
 	for _, f := range tenFamilies() {
-		r := Up(f, PowerOfTen(1200))
+		r := Up(f, PowerOfTen(far(1200)))
 		next := 1
 		i := 0
 		require.NoError(t, Walk(context.Background(), r, func(v *Visit) bool {
