@@ -62,19 +62,17 @@ func (s *scale) base() (arcs [3]*arc, edges [3]edge) {
 
 // entry is an edge in front of which all lengths add up, in machine words.
 type entry struct {
-	u          vertex // the pivot: the arc with the smaller number
-	uLo, uHi   int64  // its length φ; u itself has f in its place if it is small
-	y0, y1     vertex // the vertex behind, and the other end
-	swapped    bool   // u lies above y1
-	underlying edge
+	u        vertex // the pivot: the arc with the smaller number
+	uLo, uHi int64  // its length φ; u itself has f in its place if it is small
+	y0, y1   vertex // the vertex behind, and the other end
 }
 
 // enter turns a settled edge into an entry.
 func (s *scale) enter(e edge) entry {
-	x := entry{u: e.a.v, y1: e.b.v, y0: e.c.v, underlying: e}
+	x := entry{u: e.a.v, y1: e.b.v, y0: e.c.v}
 	u := e.a
 	if e.b.n.Cmp(e.a.n) < 0 {
-		x.u, x.y1, x.swapped = e.b.v, e.a.v, true
+		x.u, x.y1 = e.b.v, e.a.v
 		u = e.b
 	}
 	x.uLo, x.uHi = x.u.lo, x.u.hi

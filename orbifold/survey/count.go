@@ -22,8 +22,7 @@ const MaxBounds = 1 << 12
 // Not each of them is visited: behind the edges where logarithms add up, the
 // slopes are the primitive vectors m·u + n·w in a triangle, counted by Möbius
 // inversion, once with each end of the enclosures. Where the two counts
-// differ, the slopes behind the edge are visited and those at the bound are
-// decided exactly. Cost: O(x·log x) divisions for bounds of x bits, against x² slopes.
+// differ, the slopes between the two lines are decided exactly. Cost: O(x·log x) divisions for bounds of x bits, against x² slopes.
 func Count(ctx context.Context, f orbifold.Family, bound *big.Int) (*big.Int, error) {
 	if bound == nil {
 		return nil, fmt.Errorf("survey: count up to nothing: want a bound of at least 1: %w", ErrBound)
@@ -137,14 +136,12 @@ func Table(ctx context.Context, f orbifold.Family, bounds []*big.Int, o Options)
 	}
 	mu := moebius(reach)
 	far := make([][]int64, o.Workers) // by worker and column; sums of integers in any order
-	walkers := make([]*walker, o.Workers)
 	err = pool(ctx, o.Workers, len(entries), func(worker, job int) error {
-		if walkers[worker] == nil {
-			walkers[worker] = w.clone()
+		if far[worker] == nil {
 			far[worker] = make([]int64, len(columns))
 		}
 		for i := range columns {
-			n, err := walkers[worker].behindEntry(columns[i].scale, entries[job], mu)
+			n, err := w.behindEntry(columns[i].scale, entries[job], mu)
 			if err != nil {
 				return err
 			}
@@ -237,11 +234,19 @@ func (w *walker) behindEntry(s *scale, e entry, mu []int8) (int64, error) {
 	if most := primitive(e.u.lo, e.y1.lo, s.most, mu); most == sure {
 		return sure, nil
 	}
-	// Some slope lies so near to the bound that logarithms leave it open.
-	c := w.clone()
-	c.scale = s
-	count := int64(0)
-	c.sink = func(*Visit) bool { count++; return true }
-	c.deep(e.underlying)
-	return count, c.failed()
+	// Some slopes lie so near to the bound that logarithms leave it open: those with m
+	// between the two lines, for some n.
+	count := sure
+	for n := int64(1); n*e.y1.lo+e.u.lo <= s.most && !w.halt.Load(); n++ {
+		first := max((s.sure-n*e.y1.hi)/e.u.hi, 0) // not before 1, should the quotient be negative
+		for m := first + 1; m*e.u.lo+n*e.y1.lo <= s.most; m++ {
+			at := coords(m)*e.u.at + coords(n)*e.y1.at
+			if gcd(m, n) == 1 && s.exact.within(at.slope()) {
+				count++
+			}
+		}
+	}
+	s.exact.mu.Lock()
+	defer s.exact.mu.Unlock()
+	return count, s.exact.err
 }

@@ -65,6 +65,26 @@ func TestCountIsExactAtTheBound(t *testing.T) {
 	}
 }
 
+// With lengths made so coarse that many slopes are left open, the count is the same.
+func TestCountDecidesWhatLengthsLeaveOpen(t *testing.T) {
+	for _, f := range tenFamilies() {
+		w, err := newWalker(Up(f, PowerOfTen(60)))
+		require.NoError(t, err)
+		edges := w.near(func(coords, *big.Int) {})
+		mu := moebius(1000)
+		for _, e := range edges {
+			entry := w.enter(e)
+			want, err := w.behindEntry(w.scale, entry, mu)
+			require.NoError(t, err)
+			entry.u.lo -= entry.u.lo / 50
+			entry.y1.hi += entry.y1.hi / 50
+			got, err := w.behindEntry(w.scale, entry, mu)
+			require.NoError(t, err)
+			require.Equal(t, want, got)
+		}
+	}
+}
+
 func boolToInt(b bool) int64 {
 	if b {
 		return 1
