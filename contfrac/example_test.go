@@ -160,7 +160,7 @@ func ExampleSurd_Periodic() {
 	fmt.Println(s)
 	// Output:
 	// [9; (1, 2, 3, 1, 1, 5, 1, 8, 1, 5, 1, 1, 3, 2, 1, 18)] <nil>
-	// (0 + √94)/1
+	// √94
 	// 9.695359714832658028148881150845
 }
 
@@ -172,7 +172,7 @@ func ExampleParsePeriodic() {
 	fmt.Println(err)
 	// Output:
 	// [5; (1, 2)] <nil>
-	// (4 + √3)/1 false (-4 + √3)/-1
+	// 4 + √3 false (-4 + √3)/-1
 	// contfrac: period [0]: one term or more, of at least 1, is accepted: term out of range
 }
 
@@ -186,7 +186,7 @@ func ExampleSurd_Lagrange() {
 	lo, hi, _ := l.Enclosure(40)
 	fmt.Println(lo, hi)
 	// Output:
-	// (0 + √5525)/25 <nil>
+	// √5525/25 <nil>
 	// 2.97321374946370110452
 	// 2.97321374946 2.973213749465
 }

@@ -131,7 +131,7 @@ func FuzzParsePeriodic(f *testing.F) {
 }
 
 func FuzzParseSurd(f *testing.F) {
-	for _, s := range []string{"(1 + √5)/2", "(2 + √20)/4", "(-3 + √7)/-2", "(0 + √4)/1", "(0 + √2)/0", "√2"} {
+	for _, s := range []string{"(1 + √5)/2", "(2 + √20)/4", "(-3 + √7)/-2", "√4", "√2/0", "√2"} {
 		f.Add(s)
 	}
 	f.Fuzz(func(t *testing.T, s string) {

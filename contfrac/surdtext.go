@@ -6,15 +6,24 @@ import (
 	"strings"
 )
 
-// String returns "(P + √D)/Q" with the integers in lowest terms, as in "(1 + √5)/2", "(0 + √2)/1",
-// "(-3 + √7)/-2".
+// String returns "(P + √D)/Q" with the integers in lowest terms, as in "(1 + √5)/2" and "(-3 + √7)/-2";
+// Q = 1 and P = 0 are left out: "3 + √8", "√2", "√221/5".
 func (x Surd) String() string {
 	return x.text(func(n *big.Int) string { return n.String() })
 }
 
 func (x Surd) text(number func(*big.Int) string) string {
 	e := x.parts()
-	return "(" + number(e.p) + " + √" + number(e.d) + ")/" + number(e.q)
+	root := "√" + number(e.d)
+	switch whole := e.q.CmpAbs(oneInt) == 0 && e.q.Sign() > 0; {
+	case whole && e.p.Sign() == 0:
+		return root
+	case whole:
+		return number(e.p) + " + " + root
+	case e.p.Sign() == 0:
+		return root + "/" + number(e.q)
+	}
+	return "(" + number(e.p) + " + " + root + ")/" + number(e.q)
 }
 
 // Format implements fmt.Formatter: %s (and %q, quoted) writes the integers in full and %v writes
@@ -24,16 +33,26 @@ func (x Surd) Format(f fmt.State, verb rune) {
 }
 
 // ParseSurd reads a quadratic irrational in the form "(P + √D)/Q", not necessarily in lowest
-// terms. Texts longer than MaxText and integers of more than MaxDigits digits give ErrTooLarge,
-// other forms ErrSyntax; what the integers must be is said at NewSurd.
+// terms; the brackets and Q may be left out for Q = 1, P and the brackets for P = 0. Texts longer
+// than MaxText and integers of more than MaxDigits digits give ErrTooLarge, other forms ErrSyntax;
+// what the integers must be is said at NewSurd.
 func ParseSurd(s string) (Surd, error) {
 	if err := checkText("surd", len(s)); err != nil {
 		return Surd{}, err
 	}
-	body, opened := strings.CutPrefix(s, "(")
-	p, rest, plus := strings.Cut(body, " + √")
-	d, q, over := strings.Cut(rest, ")/")
-	if !opened || !plus || !over {
+	body, q, ok := s, "1", true
+	if inner, bracket := strings.CutPrefix(s, "("); bracket {
+		body, q, ok = strings.Cut(inner, ")/")
+	}
+	p, d, sum := strings.Cut(body, " + √")
+	if !sum {
+		p = "0"
+		d, ok = strings.CutPrefix(body, "√")
+		if before, after, over := strings.Cut(d, "/"); over && len(body) == len(s) {
+			d, q = before, after
+		}
+	}
+	if !ok {
 		return Surd{}, fmt.Errorf("contfrac: surd %s: the form (1 + √5)/2 is accepted: %w", quote(s), ErrSyntax)
 	}
 	var n [3]*big.Int

@@ -81,7 +81,7 @@ func TestMalformedTextsAreRefused(t *testing.T) {
 		assert.ErrorIs(t, x.UnmarshalText([]byte(text)), want)
 	}
 	for text, want := range map[string]error{
-		"": contfrac.ErrSyntax, "√2": contfrac.ErrSyntax, "(1 + √5/2": contfrac.ErrSyntax, "(1 - √5)/2": contfrac.ErrSyntax, "(1 + √x)/2": contfrac.ErrSyntax,
+		"": contfrac.ErrSyntax, "√": contfrac.ErrSyntax, "√2/": contfrac.ErrSyntax, "1 + √2/3": contfrac.ErrSyntax, "2": contfrac.ErrSyntax, "(1 + √2)": contfrac.ErrSyntax, "(√2)/3/4": contfrac.ErrSyntax, "(1 + √5/2": contfrac.ErrSyntax, "(1 - √5)/2": contfrac.ErrSyntax, "(1 + √x)/2": contfrac.ErrSyntax,
 		"(01 + √5)/2": contfrac.ErrSyntax, "(1 + √5)/-0": contfrac.ErrSyntax, "(1 + √5)/0": contfrac.ErrInfinite, "(1 + √4)/2": contfrac.ErrDiscriminant,
 		"(1 + √-5)/2": contfrac.ErrDiscriminant, "(" + digits + " + √5)/2": contfrac.ErrTooLarge, long: contfrac.ErrTooLarge,
 	} {
@@ -92,6 +92,15 @@ func TestMalformedTextsAreRefused(t *testing.T) {
 	}
 	var x contfrac.Surd
 	assert.ErrorIs(t, x.UnmarshalText([]byte("(2 + √20)/4")), contfrac.ErrSyntax, "not in lowest terms")
+	for short, full := range map[string]string{"√2": "(0 + √2)/1", "3 + √8": "(3 + √8)/1", "√5525/25": "(0 + √5525)/25", "√2/-1": "(0 + √2)/-1"} {
+		y, err := contfrac.ParseSurd(full)
+		require.NoError(t, err)
+		assert.Equal(t, short, y.String())
+		var z contfrac.Surd
+		assert.NoError(t, z.UnmarshalText([]byte(short)))
+		assert.True(t, z.Equal(y))
+		assert.ErrorIs(t, z.UnmarshalText([]byte(full)), contfrac.ErrSyntax, "not the short form")
+	}
 	y, err := contfrac.ParseSurd("(2 + √20)/4")
 	require.NoError(t, err)
 	assert.True(t, x.Equal(y))

@@ -49,7 +49,7 @@ func ExampleFan_Ratio() {
 	fmt.Printf("%v, between %.20f and %.20f\n", ratio, lo, hi)
 	// Output:
 	// [1 5 29 169 985 5741 33461]
-	// (3 + √8)/1, between 5.82842712474619009760 and 5.82842712474619009760
+	// 3 + √8, between 5.82842712474619009760 and 5.82842712474619009760
 }
 
 func ExampleFan_Recurrence() {
