@@ -176,19 +176,27 @@ func TestIdentifyFindsTheSlopeOfANumber(t *testing.T) {
 	})
 }
 
+// TestIdentifyIsComplete compares with every slope in a box that holds all
+// numbers up to 10⁶, for all n up to there. Where the box has no slope with n, it is enough
+// that Identify returns only slopes that do carry n, which is tested for
+// some; every n that occurs is asked for.
 func TestIdentifyIsComplete(t *testing.T) {
+	const most, box = 1_000_000, 40
 	for _, f := range []orbifold.Family{{}, orbifold.MustNew(1, 1, 1), orbifold.MustNew(2, 0, 1), orbifold.MustNew(3, 0, 0), orbifold.MustNew(0, 0, 2)} {
-		const most = 2000
 		want := map[int64]map[farey.Key]bool{}
-		for s := range must(farey.Box(20, 20))(t) {
+		for s := range must(farey.Box(box, box))(t) {
 			if n := must(f.Number(s))(t); n.Cmp(big.NewInt(most)) <= 0 {
+				// Numbers grow along every path, and a path that leaves the box has
+				// a slope in its outer part, so none outside is small.
+				p, q, _ := s.Int64s()
+				require.Less(t, max(p, -p, q), int64(box-10))
 				if want[n.Int64()] == nil {
 					want[n.Int64()] = map[farey.Key]bool{}
 				}
 				want[n.Int64()][f.Representative(s).Key()] = true
 			}
 		}
-		for n := int64(1); n <= most; n++ {
+		ask := func(n int64) {
 			found, err := f.Identify(context.Background(), big.NewInt(n))
 			require.NoError(t, err)
 			got := map[farey.Key]bool{}
@@ -201,6 +209,13 @@ func TestIdentifyIsComplete(t *testing.T) {
 			} else {
 				require.Equal(t, want[n], got, "%d in %v", n, f)
 			}
+		}
+		for n := range want {
+			ask(n)
+			ask(n + 1)
+		}
+		for n := int64(1); n <= 1000; n++ {
+			ask(n)
 		}
 	}
 }
