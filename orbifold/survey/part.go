@@ -89,8 +89,9 @@ func (p Part[S]) MarshalJSON() ([]byte, error) {
 	return json.Marshal(partText[S]{p.header, sums})
 }
 
-// UnmarshalJSON reads what MarshalJSON writes and checks that each shard is
-// one of the region, none twice. Errors wrap ErrSyntax or ErrMismatch.
+// UnmarshalJSON reads what MarshalJSON writes, up to white space, refuses everything
+// else and checks that each shard is one of the region, none twice. Errors wrap ErrSyntax
+// or ErrMismatch, or are those of regions and summaries.
 func (p *Part[S]) UnmarshalJSON(text []byte) error {
 	if len(text) > MaxText {
 		return fmt.Errorf("survey: part of %d bytes: want at most %d: %w", len(text), MaxText, ErrTooLarge)
@@ -125,6 +126,10 @@ func (p *Part[S]) UnmarshalJSON(text []byte) error {
 		}
 		t.Sums[i].index, last = place, place
 	}
-	*p = Part[S]{t.header, t.Sums}
+	out := Part[S]{t.header, t.Sums}
+	if err := sameText(out, text); err != nil {
+		return fmt.Errorf("survey: part: %w", err)
+	}
+	*p = out
 	return nil
 }

@@ -62,7 +62,7 @@ type Line struct {
 
 // Up returns the region of the numbers of f up to bound, one slope for each
 // symmetry class.
-func Up(f orbifold.Family, bound *big.Int) Region { return Region{Family: f, Bound: bound} }
+func Up(f orbifold.Family, bound *big.Int) Region { return Region{Family: f, Bound: bound}.clone() }
 
 // PowerOfTen returns 10^d, a bound as it is mostly given; d < 0 counts as 0, and
 // a d for which the result would pass MaxBoundBits gives the bound just past it,
