@@ -53,6 +53,7 @@ func newPlan(n float64, workers int, memory int64) (plan, bool) {
 	p := plan{bits: bucketBits(n)}
 	p.mean = math.Ldexp(n, -int(p.bits))
 	memory = min(memory, largestSpace)
+	memory -= min(memory/4, 64<<20) // for all the rest of the program
 	most := min(1<<p.bits, maxBuckets)
 	// The smallest number of passes whose buckets fit.
 	fits := sort.Search(most, func(i int) bool { return p.memory(most-i, workers) <= float64(memory) })
