@@ -12,6 +12,7 @@ import (
 	"github.com/stretchr/testify/require"
 	"pgregory.net/rapid"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
 )
@@ -269,6 +270,34 @@ func TestIdentifyAndNumberUndoEachOtherFarOut(t *testing.T) {
 		n.Add(n, big.NewInt(1))
 		for _, u := range must(f.Identify(context.Background(), n))(t) {
 			assertEqualInt(t, n, must(f.Number(u))(t))
+		}
+	})
+}
+
+// TestIdentifyFindsBothSidesOfEveryFan goes to slopes whose older parent and the
+// parents of that are all too large for machine numbers, the newest vertex on the
+// left and on the right of the fan.
+func TestIdentifyFindsBothSidesOfEveryFan(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		f := families().Draw(t, "family")
+		p, q := rapid.Int64Range(-400, 400).Draw(t, "p"), rapid.Int64Range(100, 400).Draw(t, "q")
+		path := must(farey.FromInts(p, q))(t).Path()
+		if path.IsBase() {
+			return
+		}
+		for _, side := range []contfrac.Letter{contfrac.L, contfrac.R} {
+			// First round the newest vertex, then away from it on one side.
+			var moves contfrac.WordBuilder
+			moves.AppendWord(path.Moves())
+			moves.Append(side.Other(), 1)
+			moves.Append(side, uint64(rapid.IntRange(1, 3).Draw(t, "steps")))
+			s, _ := farey.NewPath(path.First(), moves.Word()).Slope()
+			n := must(f.Number(s))(t)
+			if n.BitLen() > 6000 {
+				continue
+			}
+			found := must(f.Identify(context.Background(), n))(t)
+			assert.True(t, slices.ContainsFunc(found, f.Representative(s).Equal), "%v in %v: %v", s, f, found)
 		}
 	})
 }
