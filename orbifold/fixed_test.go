@@ -48,3 +48,31 @@ func TestFixedCosineIsWithinOneUnit(t *testing.T) {
 		}
 	}
 }
+
+func TestFixedElementOfACosineRingIsWithinItsBound(t *testing.T) {
+	r := rand.New(rand.NewSource(5))
+	for _, n := range []int{4, 5, 7, 12, 30, 101} {
+		q, err := NewCosineRing(n)
+		if err != nil {
+			t.Fatal(err)
+		}
+		for _, prec := range []uint{64, 100, 200} {
+			for range 30 {
+				c := make([]*big.Int, q.Degree())
+				for i := range c {
+					c[i] = new(big.Int).Rand(r, new(big.Int).Lsh(unit, uint(1+r.Intn(200))))
+					if r.Intn(2) == 0 {
+						c[i].Neg(c[i])
+					}
+				}
+				x := q.ring().element(c)
+				v, e := x.fixed(prec)
+				far, _ := x.fixed(prec + 1000)
+				bound, _ := new(big.Float).SetInt(e).Float64()
+				if off := offBy(v, far, 1000); off > bound+1e-9 {
+					t.Fatalf("%v with %d bits is off by %v, more than %v", x, prec, off, bound)
+				}
+			}
+		}
+	}
+}
