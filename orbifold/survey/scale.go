@@ -104,10 +104,11 @@ func (s *scale) unit(n *big.Int, k int64) (lo, hi int64) {
 func (s *scale) units(lo, hi *big.Float) (int64, int64) {
 	a, _ := new(big.Float).SetMantExp(lo, int(s.shift)).Int64()
 	b, accuracy := new(big.Float).SetMantExp(hi, int(s.shift)).Int64()
-	if accuracy != big.Exact {
+	if accuracy != big.Exact && b < unbounded {
 		b++
 	}
-	return a, b
+	// A bound that a box keeps out of reach may be past all units.
+	return min(a, unbounded), min(b, unbounded)
 }
 
 // nats converts the enclosure of a length φ to one of ln N = φ − ln K, outward.

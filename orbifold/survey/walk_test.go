@@ -148,6 +148,22 @@ func TestWalkOfABox(t *testing.T) {
 	}
 }
 
+// A bound far past everything in the box bounds nothing.
+func TestBoundPastTheBox(t *testing.T) {
+	for _, f := range tenFamilies() {
+		n := 0
+		r := Region{Family: f, Bound: PowerOfTen(MaxBoundBits / 4), Box: &Box{Num: 1, Den: 3}, All: true}
+		require.NoError(t, Walk(context.Background(), r, func(v *Visit) bool {
+			n++
+			x, err := v.Number()
+			require.NoError(t, err)
+			checkArc(t, v.Arc(), x)
+			return true
+		}))
+		assert.Equal(t, 8, n) // 0, 1/0, ±1, ±1/2, ±1/3
+	}
+}
+
 func TestWalkDoesNotAllocate(t *testing.T) {
 	w, err := newWalker(Up(orbifold.MustNew(2, 0, 1), PowerOfTen(400)))
 	require.NoError(t, err)
