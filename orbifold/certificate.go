@@ -197,7 +197,7 @@ func (f Family) certifyDescent(ctx context.Context, c *claims) (err error) {
 }
 
 func (f Family) certifyContinuant(ctx context.Context, c *claims) error {
-	fraction, err := f.Fraction(c.slope)
+	fraction, err := f.FractionContext(ctx, c.slope)
 	if err != nil {
 		return err
 	}
@@ -212,7 +212,7 @@ func (f Family) certifyContinuant(ctx context.Context, c *claims) error {
 	} else {
 		c.fraction, c.continuant = &fraction, Count{Method: Exact, value: fraction.Numerator()}
 		if !c.slope.IsBase() {
-			w, err := f.Word(c.slope)
+			w, err := f.WordContext(ctx, c.slope)
 			if err != nil {
 				return err
 			}
@@ -228,17 +228,15 @@ func (f Family) certifyMatchings(ctx context.Context, c *claims) error {
 		c.matchings.Method = NotRun
 		return nil
 	}
-	g, err := f.Snake(c.slope)
+	g, err := f.SnakeContext(ctx, c.slope)
 	if err != nil {
 		return err
 	}
 	if g.Tiles() > MaxExactTiles {
 		c.matchings, err = countModulo(func(p uint64) (uint64, error) {
-			n, err := snake.Weigh(snake.Semiring[uint64](wordResidues{p}), g, snake.Weights[uint64]{})
-			if err != nil {
-				return 0, err
-			}
-			return n, ctx.Err()
+			return aside(ctx, func() (uint64, error) {
+				return snake.Weigh(snake.Semiring[uint64](wordResidues{p}), g, snake.Weights[uint64]{})
+			})
 		})
 	} else {
 		c.matchings = Count{Method: Exact, value: g.Count()}
@@ -252,6 +250,27 @@ func (f Family) certifyMatrix(ctx context.Context, c *claims) (err error) {
 	}
 	c.root = c.matrix.A()
 	return c.agree(ctx, "matrix", Count{Method: Exact, value: c.matrix.B()}, nil)
+}
+
+// aside returns what work returns, or the error of ctx as soon as that ends;
+// work, which cannot be interrupted, then runs to its end with nobody waiting.
+func aside[T any](ctx context.Context, work func() (T, error)) (T, error) {
+	type result struct {
+		value T
+		err   error
+	}
+	done := make(chan result, 1)
+	go func() {
+		value, err := work()
+		done <- result{value, err}
+	}()
+	select {
+	case r := <-done:
+		return r.value, r.err
+	case <-ctx.Done():
+		var none T
+		return none, ctx.Err()
+	}
 }
 
 // countModulo counts modulo each of the primes.

@@ -144,6 +144,7 @@ func TestCancelledWorkStops(t *testing.T) {
 	f := orbifold.MustNew(1, 0, 2)
 	far := farey.MustParse("1346269/2178309")
 	huge := new(big.Int).Exp(big.NewInt(10), big.NewInt(5000), nil)
+	long := farey.MustParse("1/100000000") // 2·10⁸ crossings
 	for name, call := range map[string]func(context.Context) error{
 		"Number":   func(ctx context.Context) error { n, err := f.NumberContext(ctx, far); assert.Nil(t, n); return err },
 		"Matrix":   func(ctx context.Context) error { _, err := f.MatrixContext(ctx, far); return err },
@@ -177,6 +178,20 @@ func TestCancelledWorkStops(t *testing.T) {
 	for name, call := range map[string]func(context.Context) error{
 		"Number":   func(ctx context.Context) error { _, err := f.NumberContext(ctx, far); return err },
 		"Identify": func(ctx context.Context) error { _, err := f.Identify(ctx, huge); return err },
+		"Word":     func(ctx context.Context) error { _, err := f.WordContext(ctx, long); return err },
+		"Fraction": func(ctx context.Context) error { _, err := f.FractionContext(ctx, long); return err },
+		"Snake": func(ctx context.Context) error {
+			_, err := f.SnakeContext(ctx, farey.MustParse("1/8000000"))
+			return err
+		},
+		"Eval": func(ctx context.Context) error {
+			_, err := orbifold.EvalContext(ctx, snake.Semiring[float64](snake.Floats{}), [3]float64{1, 0, 2}, long)
+			return err
+		},
+		"Certify": func(ctx context.Context) error {
+			_, err := orbifold.Family{}.CertifyContext(ctx, farey.MustParse("1/1500000"))
+			return err
+		},
 	} {
 		ctx, cancel := context.WithTimeout(context.Background(), 20*time.Millisecond)
 		err := call(ctx)

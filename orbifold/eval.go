@@ -1,6 +1,7 @@
 package orbifold
 
 import (
+	"context"
 	"fmt"
 
 	"example.com/onecusp/farey"
@@ -10,7 +11,7 @@ import (
 // Eval returns the number at the slope s over any commutative semiring r, with
 // weights of r in the order k₀, k∞, k₁ and unit lengths. It uses sums and
 // products only, so weights may be variables, 2cos(π/n), elements of a finite
-// field, intervals. Over the integers it equals Family.Number.
+// field. Over the integers it equals Family.Number.
 //
 // It carries (a, b), the lengths from the start of the arc to the left and the
 // right end of the edge just crossed: an own corner of weight k nearer to the
@@ -20,6 +21,13 @@ import (
 // ErrTooLarge.
 // Source: "Positivity for cluster algebras from surfaces", Adv. Math. 227 (2011).
 func Eval[T any](r snake.Semiring[T], weights [3]T, s farey.Slope) (T, error) {
+	return EvalContext(context.Background(), r, weights, s)
+}
+
+// EvalContext is Eval that stops when ctx ends, with its error; a single
+// operation of the semiring is not interrupted.
+func EvalContext[T any](ctx context.Context, r snake.Semiring[T], weights [3]T, s farey.Slope) (T, error) {
+	ctx = contextOf(ctx)
 	if r == nil {
 		var zero T
 		return zero, fmt.Errorf("orbifold: value at %v: want a semiring: %w", s, ErrNoSemiring)
@@ -28,7 +36,7 @@ func Eval[T any](r snake.Semiring[T], weights [3]T, s farey.Slope) (T, error) {
 	if s.IsBase() {
 		return a, nil
 	}
-	crossings, err := corridor(s)
+	crossings, err := corridor(ctx, s)
 	if err != nil {
 		return r.Zero(), err
 	}
@@ -44,6 +52,9 @@ func Eval[T any](r snake.Semiring[T], weights [3]T, s farey.Slope) (T, error) {
 		case farey.Right:
 			a = r.Add(a, b)
 		}
+	}
+	if err := ctx.Err(); err != nil {
+		return r.Zero(), fmt.Errorf("orbifold: value at %v: %w", s, err)
 	}
 	return r.Add(a, b), nil
 }

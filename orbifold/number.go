@@ -16,7 +16,8 @@ import (
 // flips about one vertex is jumped with O(log n) multiplications, so that the
 // whole costs a small multiple of one multiplication of two numbers whose
 // sizes add up to the size of the result, and a small multiple of its memory.
-// A number with more bits than f.Limit() is ErrTooLarge, before it is computed.
+// A number with more bits than f.Limit() is ErrTooLarge, before it is computed;
+// one of just f.Limit() bits may be, as the bound on the bits can be one too many.
 //
 // Source: "Generalization of Markov Diophantine equation via generalized
 // cluster algebra", Electron. J. Combin. 30 (2023).

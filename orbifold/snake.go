@@ -1,6 +1,7 @@
 package orbifold
 
 import (
+	"context"
 	"fmt"
 	"math/big"
 
@@ -34,6 +35,12 @@ func ClassOf(l snake.Label) (farey.Class, bool) {
 // ErrTooLarge. Source: "Positivity for cluster algebras from surfaces", Adv.
 // Math. 227 (2011).
 func (f Family) Snake(s farey.Slope) (snake.Graph, error) {
+	return f.SnakeContext(context.Background(), s)
+}
+
+// SnakeContext is Snake that stops when ctx ends, with its error.
+func (f Family) SnakeContext(ctx context.Context, s farey.Slope) (snake.Graph, error) {
+	ctx = contextOf(ctx)
 	if s.IsBase() {
 		return snake.EdgeWithLabel(LabelOf(s.Class())), nil
 	}
@@ -41,7 +48,7 @@ func (f Family) Snake(s farey.Slope) (snake.Graph, error) {
 		return snake.Graph{}, fmt.Errorf("orbifold: snake graph of %v in family %v: %s tiles, at most %d are glued (Word has the run form): %w",
 			s, f, contfrac.Abbreviate(n), snake.MaxTiles, ErrTooLarge)
 	}
-	crossings, err := corridor(s)
+	crossings, err := corridor(ctx, s)
 	if err != nil {
 		return snake.Graph{}, err
 	}
@@ -53,10 +60,16 @@ func (f Family) Snake(s farey.Slope) (snake.Graph, error) {
 		} else {
 			b.Glue(letterOf(last.Turn), LabelOf(last.Class.Third(x.Class)), LabelOf(x.Class))
 		}
-		for range f.weights[x.Class] {
+		for i := range f.weights[x.Class] {
+			if i&8191 == 8191 && ctx.Err() != nil {
+				break
+			}
 			b.GlueOwn(letterOf(x.Nearer))
 		}
 		last = x
+	}
+	if err := ctx.Err(); err != nil {
+		return snake.Graph{}, fmt.Errorf("orbifold: snake graph of %v: %w", s, err)
 	}
 	p, q, _ := s.Int64s()
 	end := farey.Point{X: q, Y: p}

@@ -1,6 +1,7 @@
 package orbifold
 
 import (
+	"context"
 	"fmt"
 	"iter"
 	"math/big"
@@ -25,16 +26,25 @@ const MaxCrossings = int64(1) << 28
 // O(|p| + q) time, about two bytes a crossing. An arc that crosses nothing is
 // ErrNoCrossing; more than MaxCrossings is ErrTooLarge.
 func (f Family) Word(s farey.Slope) (contfrac.Word, error) {
+	return f.WordContext(context.Background(), s)
+}
+
+// WordContext is Word that stops when ctx ends, with its error.
+func (f Family) WordContext(ctx context.Context, s farey.Slope) (contfrac.Word, error) {
+	ctx = contextOf(ctx)
 	if s.IsBase() {
 		return contfrac.Word{}, fmt.Errorf("orbifold: word of %v: slopes other than 0/1, 1/0 and 1/1 have one: %w", s, ErrNoCrossing)
 	}
-	crossings, err := corridor(s)
+	crossings, err := corridor(ctx, s)
 	if err != nil {
 		return contfrac.Word{}, err
 	}
 	var b contfrac.WordBuilder
 	for letter, n := range f.letters(crossings) {
 		b.Append(letter, n)
+	}
+	if err := ctx.Err(); err != nil {
+		return contfrac.Word{}, fmt.Errorf("orbifold: word of %v: %w", s, err)
 	}
 	return b.Word(), nil
 }
@@ -61,8 +71,9 @@ func letterOf(s farey.Side) contfrac.Letter {
 	return contfrac.L
 }
 
-// corridor returns the crossings of an arc that has at most MaxCrossings.
-func corridor(s farey.Slope) (iter.Seq[farey.Crossing], error) {
+// corridor returns the crossings of an arc that has at most MaxCrossings. They
+// break off when ctx ends, which the caller has to ask then.
+func corridor(ctx context.Context, s farey.Slope) (iter.Seq[farey.Crossing], error) {
 	total := new(big.Int)
 	for _, n := range s.CrossingCounts() {
 		total.Add(total, n)
@@ -70,7 +81,22 @@ func corridor(s farey.Slope) (iter.Seq[farey.Crossing], error) {
 	if total.Cmp(big.NewInt(MaxCrossings)) > 0 {
 		return nil, fmt.Errorf("orbifold: corridor of %v: %s crossings, at most %d are walked: %w", s, contfrac.Abbreviate(total), MaxCrossings, ErrTooLarge)
 	}
-	return s.Crossings()
+	crossings, err := s.Crossings()
+	if err != nil {
+		return nil, err
+	}
+	return func(yield func(farey.Crossing) bool) {
+		i := 0
+		for x := range crossings {
+			if i&8191 == 0 && ctx.Err() != nil {
+				return
+			}
+			i++
+			if !yield(x) {
+				return
+			}
+		}
+	}, nil
 }
 
 // Fraction returns the continued fraction of the word of s with its first and
@@ -79,10 +105,15 @@ func corridor(s farey.Slope) (iter.Seq[farey.Crossing], error) {
 // −1/1, gives [2]); its numerator is the number at s. An arc that crosses
 // nothing gives [1]. Cost and other errors as for Word.
 func (f Family) Fraction(s farey.Slope) (contfrac.Fraction, error) {
+	return f.FractionContext(context.Background(), s)
+}
+
+// FractionContext is Fraction that stops when ctx ends, with its error.
+func (f Family) FractionContext(ctx context.Context, s farey.Slope) (contfrac.Fraction, error) {
 	if s.IsBase() {
 		return contfrac.FractionOf(1)
 	}
-	w, err := f.Word(s)
+	w, err := f.WordContext(ctx, s)
 	if err != nil {
 		return contfrac.Fraction{}, err
 	}
