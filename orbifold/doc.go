@@ -34,6 +34,17 @@
 // hold, [Family.NumberMod], [Family.RootMod], [Family.Log], [Family.LogBig],
 // [Family.Bits] and [Family.Compare] still answer.
 //
+// # Around a number
+//
+// [Family.Identify] goes back from a number to all its slopes, and
+// [Family.Nearest] lists those with the numbers nearest to it. [Family.Fan] is
+// the sequence of arcs round one, with its recurrence; [Family.Tree],
+// [Family.Within] and [Family.Ascending] list slopes; a [Triple] is flipped and
+// descended. [Family.Laurent] expands an arc in the lengths of the base arcs,
+// [FPolynomial] and [GVector] are its classical companions, and [Family.Band]
+// is the closed curve around it. [Eval] takes weights from any commutative
+// semiring, such as a [CosineRing] for orbifold points of any order.
+//
 // # Sources
 //
 // The equation and that every solution is reached: "Generalization of Markov
