@@ -32,6 +32,9 @@ var (
 	// ErrModulus reports a modulus below 1.
 	ErrModulus = errors.New("a modulus is an integer ≥ 1")
 
+	// ErrCount reports a number of results to be returned that is out of range.
+	ErrCount = errors.New("count out of range")
+
 	// ErrPrecision reports a precision outside 1 … MaxLogPrecision.
 	ErrPrecision = errors.New("precision out of range")
 

@@ -234,7 +234,7 @@ func TestEquationAsText(t *testing.T) {
 func TestErrorsAreNotNested(t *testing.T) {
 	all := []error{
 		orbifold.ErrWeight, orbifold.ErrTooLarge, orbifold.ErrNoCrossing, orbifold.ErrNotSolution, orbifold.ErrNotPositive,
-		orbifold.ErrModulus, orbifold.ErrPrecision, orbifold.ErrNoSemiring, orbifold.ErrCertificate,
+		orbifold.ErrModulus, orbifold.ErrPrecision, orbifold.ErrNoSemiring, orbifold.ErrCertificate, orbifold.ErrCount, orbifold.ErrCosine, orbifold.ErrStep, orbifold.ErrNotNeighbours,
 	}
 	for i, a := range all {
 		for j, b := range all {

@@ -111,7 +111,7 @@ const MaxNearest = 1 << 16
 // (the representative of Domain); equal numbers at inequivalent slopes come in the order of
 // the slopes. The order is exact. There are fewer below when
 // the family has no more. Slopes that carry n itself are in neither list. An n
-// below 1, and a k outside 0 … MaxNearest, are ErrNotPositive.
+// below 1 is ErrNotPositive, a k outside 0 … MaxNearest ErrCount.
 //
 // It finds them as Identify does, in a window about ln n that is widened until
 // it holds enough; cost as for Identify, and O(k·log k) comparisons.
@@ -121,7 +121,7 @@ func (f Family) Nearest(ctx context.Context, n *big.Int, k int) (below, above []
 		return nil, nil, fmt.Errorf("orbifold: slopes near %s: %w", brief(n), ErrNotPositive)
 	}
 	if k < 0 || k > MaxNearest {
-		return nil, nil, fmt.Errorf("orbifold: %d slopes near %s: want 0 to %d: %w", k, brief(n), MaxNearest, ErrNotPositive)
+		return nil, nil, fmt.Errorf("orbifold: %d slopes near %s: want 0 to %d: %w", k, brief(n), MaxNearest, ErrCount)
 	}
 	wrap := func(err error) error { return fmt.Errorf("orbifold: slopes near %s: %w", brief(n), err) }
 	if k == 0 {

@@ -350,7 +350,7 @@ func TestNearestIsTheNeighbourhoodInTheSortedWalk(t *testing.T) {
 	})
 	for _, k := range []int{-1, orbifold.MaxNearest + 1} {
 		_, _, err := orbifold.Family{}.Nearest(context.Background(), big.NewInt(5), k)
-		assert.ErrorIs(t, err, orbifold.ErrNotPositive)
+		assert.ErrorIs(t, err, orbifold.ErrCount)
 	}
 	for _, n := range []*big.Int{nil, new(big.Int), big.NewInt(-7)} {
 		_, _, err := orbifold.Family{}.Nearest(context.Background(), n, 1)

@@ -34,8 +34,9 @@ var (
 	ErrIndex = errors.New("index out of range")
 	// ErrNoSource reports a missing source of random bits.
 	ErrNoSource = errors.New("no source of random bits")
-	// ErrTooLarge reports a number that would be too large to hold.
-	ErrTooLarge = errors.New("number too large")
+	// ErrTooLarge reports a number that would be too large to hold; the same
+	// value as in contfrac.
+	ErrTooLarge = contfrac.ErrTooLarge
 	// ErrNotCrossing reports a common piece of two graphs in which they do not
 	// cross.
 	ErrNotCrossing = errors.New("not a crossing")
