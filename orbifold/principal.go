@@ -10,10 +10,11 @@ import (
 // FPolynomial returns the F-polynomial of the arc of slope s in the classical
 // family, in the variables 1, 2 and 3 for y₀, y∞, y₁ (Text writes these names): the sum over the perfect
 // matchings of its snake graph of the product of y over the flipped tiles, each
-// by the class of its diagonal. With principal coefficients at the base triangle, whose
-// quiver has two arrows from 0/1 to 1/0, two from 1/0 to 1/1 and two from 1/1 to
-// 0/1, it is the cluster variable with x₀ = x∞ = x₁ = 1. Its constant term is 1 (the minimal matching) and its value at y = 1
-// the Markov number.
+// by the class of its diagonal. With principal coefficients at the base
+// triangle, whose quiver has two arrows from 0/1 to 1/0, two from 1/0 to 1/1
+// and two from 1/1 to 0/1, it is the cluster variable with x₀ = x∞ = x₁ = 1.
+// Its constant term is 1 (the minimal matching) and its value at y = 1 the
+// Markov number.
 //
 // Limit and error are those of Laurent. Source: "Positivity for cluster algebras from
 // surfaces", Adv. Math. 227 (2011).
