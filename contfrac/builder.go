@@ -37,7 +37,7 @@ func (b *WordBuilder) Append(l Letter, n uint64) {
 // gives ErrTerm.
 func (b *WordBuilder) AppendBig(l Letter, n *big.Int) error {
 	if n == nil || n.Sign() < 0 {
-		return fmt.Errorf("contfrac: run of length %s: lengths of at least 0 are accepted: %w", describe(n), ErrTerm)
+		return fmt.Errorf("contfrac: run of length %s: lengths of at least 0 are accepted: %w", Abbreviate(n), ErrTerm)
 	}
 	b.append(l, n)
 	return nil
@@ -121,12 +121,4 @@ func (b *WordBuilder) spill(n *big.Int) {
 		b.over = new(big.Int)
 	}
 	b.over.Add(b.over, n)
-}
-
-// describe writes n for an error message.
-func describe(n *big.Int) string {
-	if n == nil {
-		return "nil"
-	}
-	return Abbreviate(n)
 }

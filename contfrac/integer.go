@@ -16,10 +16,10 @@ const (
 // Abbreviate writes n in decimal, shortened when it has more than 40 digits
 // to the first and the last twelve and the digit count, as in
 // "141421356237…356237309504 (301 digits)". It costs some multiplications of
-// the size of n, much less than writing n in full. A nil n is written as 0.
+// the size of n, much less than writing n in full. A nil n is written as "nil".
 func Abbreviate(n *big.Int) string {
 	if n == nil {
-		return "0"
+		return "nil"
 	}
 	if n.BitLen() < 128 {
 		if s := n.String(); len(s) <= abbreviateFrom {

@@ -37,7 +37,7 @@ func TestAbbreviateCountsDigitsAtPowersOfTen(t *testing.T) {
 			}
 		}
 	}
-	assert.Equal(t, "0", contfrac.Abbreviate(nil))
+	assert.Equal(t, "nil", contfrac.Abbreviate(nil))
 }
 
 func TestLongDecimalsAreRead(t *testing.T) {

@@ -12,7 +12,7 @@ import (
 // ErrTerm.
 func (f Fraction) NumeratorMod(m *big.Int) (*big.Int, error) {
 	if m == nil || m.Sign() <= 0 {
-		return nil, fmt.Errorf("contfrac: numerator modulo %s: a modulus of at least 1 is accepted: %w", describe(m), ErrTerm)
+		return nil, fmt.Errorf("contfrac: numerator modulo %s: a modulus of at least 1 is accepted: %w", Abbreviate(m), ErrTerm)
 	}
 	if m.IsUint64() {
 		return new(big.Int).SetUint64(f.numeratorMod64(m.Uint64())), nil

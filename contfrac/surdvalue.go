@@ -110,7 +110,7 @@ func (x Surd) floorShifted(k int) *big.Int {
 // of them is 1/L for the Lagrange value L of x. A q under 1, or nil, gives ErrTerm.
 func (x Surd) ApproximationConstant(p, q *big.Int) (Surd, error) {
 	if p == nil || q == nil || q.Sign() <= 0 {
-		return Surd{}, fmt.Errorf("contfrac: approximation with denominator %s: at least 1 is accepted: %w", describe(q), ErrTerm)
+		return Surd{}, fmt.Errorf("contfrac: approximation with denominator %s: at least 1 is accepted: %w", Abbreviate(q), ErrTerm)
 	}
 	qq := Product(q, q)
 	pq := Product(p, q)

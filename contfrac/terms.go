@@ -42,7 +42,7 @@ func (r rule) buildSmall(terms []int64) (termBuilder, error) {
 // add appends t if the rule allows it.
 func (r rule) add(b *termBuilder, t *big.Int) error {
 	if t == nil || b.n > 0 && t.Cmp(r.least) < 0 {
-		return fmt.Errorf("%s in a %s: any integer first and then integers of at least %s are accepted: %w", describe(t), r.name, r.least, ErrTerm)
+		return fmt.Errorf("%s in a %s: any integer first and then integers of at least %s are accepted: %w", Abbreviate(t), r.name, r.least, ErrTerm)
 	}
 	b.push(t)
 	return nil

@@ -7,6 +7,7 @@ import (
 	"math/big"
 	"slices"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
 )
@@ -61,7 +62,7 @@ func Families(ctx context.Context, numbers []*big.Int, o Options) ([]FamilyMatch
 	}
 	for _, n := range numbers {
 		if n == nil || n.Sign() <= 0 {
-			return nil, fmt.Errorf("recognize: families for the number %s: %w", brief(n), ErrNotPositive)
+			return nil, fmt.Errorf("recognize: families for the number %s: %w", contfrac.Abbreviate(n), ErrNotPositive)
 		}
 	}
 	var found []FamilyMatch

@@ -55,7 +55,7 @@ func (m FanMatch) Check(ctx context.Context, s Sequence) error {
 			return err
 		}
 		if y.Cmp(a) != 0 {
-			return fmt.Errorf("recognize: term %d is %s, but %s at slope %v: %w", j, brief(a), brief(y), m.Slope(int64(j)), linear.ErrNotRecurrent)
+			return fmt.Errorf("recognize: term %d is %s, but %s at slope %v: %w", j, contfrac.Abbreviate(a), contfrac.Abbreviate(y), m.Slope(int64(j)), linear.ErrNotRecurrent)
 		}
 	}
 	return nil
@@ -99,7 +99,7 @@ func newMatch(ctx context.Context, x section, w [2]*big.Int, y0, y1 *big.Int) (F
 		return FanMatch{}, false, nil
 	}
 	if !k.IsInt64() || !c.IsInt64() || !c1.IsInt64() {
-		return FanMatch{}, false, fmt.Errorf("there is a fan with weights %s at the centre and %s, %s round it; weights up to 2⁶³−1 are accepted: %w", brief(k), brief(c), brief(c1), ErrTooLarge)
+		return FanMatch{}, false, fmt.Errorf("there is a fan with weights %s at the centre and %s, %s round it; weights up to 2⁶³−1 are accepted: %w", contfrac.Abbreviate(k), contfrac.Abbreviate(c), contfrac.Abbreviate(c1), ErrTooLarge)
 	}
 	m, err := x.realise(ctx, role{n, k.Int64()}, [2]int64{c.Int64(), c1.Int64()}, w, [2]*big.Int{y0, y1})
 	m.FreeWeight = free

@@ -63,11 +63,11 @@ func (s Sequence) Fans(ctx context.Context, o Options) (Fans, error) {
 	}
 	for j, a := range s.terms {
 		if a.Sign() <= 0 {
-			return Fans{}, fmt.Errorf("recognize: fans with term %d equal to %s: the numbers of fans are integers ≥ 1: %w", j, brief(a), ErrNotPositive)
+			return Fans{}, fmt.Errorf("recognize: fans with term %d equal to %s: the numbers of fans are integers ≥ 1: %w", j, contfrac.Abbreviate(a), ErrNotPositive)
 		}
 	}
 	if s.constant() {
-		return Fans{}, fmt.Errorf("recognize: fans with %d terms %s: a fan has no value more than twice: %w", len(s.terms), brief(s.terms[0]), ErrConstant)
+		return Fans{}, fmt.Errorf("recognize: fans with %d terms %s: a fan has no value more than twice: %w", len(s.terms), contfrac.Abbreviate(s.terms[0]), ErrConstant)
 	}
 	trace, reason := s.trace()
 	if reason != "" {

@@ -177,5 +177,5 @@ func TestVerdictTexts(t *testing.T) {
 		fmt.Sprint(recognize.Undecided, " ", recognize.Found, " ", recognize.None, " ", recognize.Verdict(9)))
 	_, err := recognize.Families(t.Context(), []*big.Int{new(big.Int).Neg(new(big.Int).Lsh(big.NewInt(1), 300))}, recognize.Options{})
 	assert.ErrorIs(t, err, orbifold.ErrNotPositive)
-	assert.Contains(t, err.Error(), "301 bits")
+	assert.Contains(t, err.Error(), "91 digits")
 }

@@ -42,7 +42,7 @@ func Weights(zero, infinity, one *big.Int) (WeightSet, error) {
 	var square [3]*big.Int
 	for c, x := range n {
 		if x == nil || x.Sign() <= 0 {
-			return WeightSet{}, fmt.Errorf("recognize: weights for the number %s at class %v: %w", brief(x), farey.Class(c), ErrNotPositive)
+			return WeightSet{}, fmt.Errorf("recognize: weights for the number %s at class %v: %w", contfrac.Abbreviate(x), farey.Class(c), ErrNotPositive)
 		}
 		square[c] = contfrac.Product(x, x)
 	}

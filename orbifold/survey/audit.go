@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"math/big"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/orbifold"
 )
 
@@ -225,7 +226,7 @@ func (a Account) balance(w *walker, s series, counted *big.Int) (Audit, error) {
 		SumLo:     outward(s.lo, -1), SumHi: outward(s.hi, 1), Remainder: s.remainder.Text('e', 2),
 	}
 	fail := func(what string) (Audit, error) {
-		return out, fmt.Errorf("survey: audit of %v up to %s: %s: %w", w.family, brief(w.bound), what, ErrAudit)
+		return out, fmt.Errorf("survey: audit of %v up to %s: %s: %w", w.family, contfrac.Abbreviate(w.bound), what, ErrAudit)
 	}
 	switch {
 	case a.Den == 0:

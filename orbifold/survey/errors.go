@@ -3,7 +3,6 @@ package survey
 import (
 	"errors"
 	"fmt"
-	"math/big"
 
 	"example.com/onecusp/orbifold"
 )
@@ -40,17 +39,6 @@ var (
 	// ErrTooLarge is the same value as in orbifold.
 	ErrTooLarge = orbifold.ErrTooLarge
 )
-
-// brief writes an integer for an error message.
-func brief(x *big.Int) string {
-	switch {
-	case x == nil:
-		return "nothing"
-	case x.BitLen() <= 128:
-		return x.String()
-	}
-	return fmt.Sprintf("an integer of %d bits", x.BitLen())
-}
 
 // clip shortens text of a caller for an error message.
 func clip(s string) string {

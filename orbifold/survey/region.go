@@ -6,6 +6,7 @@ import (
 	"math/big"
 	"slices"
 
+	"example.com/onecusp/contfrac"
 	"example.com/onecusp/farey"
 	"example.com/onecusp/orbifold"
 )
@@ -208,7 +209,7 @@ func (r Region) Format(f fmt.State, verb rune) {
 	if verb != 's' && r.Bound != nil && len(FormatBound(r.Bound)) > 64 {
 		short := r
 		short.Bound = nil
-		fmt.Fprintf(f, "%s up to %s", short.String(), brief(r.Bound))
+		fmt.Fprintf(f, "%s up to %s", short.String(), contfrac.Abbreviate(r.Bound))
 		return
 	}
 	fmt.Fprint(f, r.String())
@@ -223,7 +224,7 @@ func (r Region) check() error {
 		return refuse("want a bound or a box", ErrRegion)
 	}
 	if r.Bound != nil && (r.Bound.Sign() <= 0 || r.Bound.BitLen() > MaxBoundBits) {
-		return refuse(fmt.Sprintf("bound %s: want 1 … 2^%d − 1", brief(r.Bound), MaxBoundBits), ErrBound)
+		return refuse(fmt.Sprintf("bound %s: want 1 … 2^%d − 1", contfrac.Abbreviate(r.Bound), MaxBoundBits), ErrBound)
 	}
 	if b := r.Box; b != nil && (b.Num < 0 || b.Den < 0 || b.Num > MaxBox || b.Den > MaxBox) {
 		return refuse(fmt.Sprintf("box of %d by %d: want sides of 0 … %d", b.Num, b.Den, MaxBox), ErrRegion)

@@ -73,7 +73,6 @@ func TestBoundTexts(t *testing.T) {
 	n, err := ParseBound("10^3")
 	require.NoError(t, err)
 	assert.Equal(t, "1000", n.String())
-	assert.NotEmpty(t, brief(nil)+brief(PowerOfTen(100)))
 	assert.Less(t, len(clip(strings.Repeat("x", 1000))), 100)
 }
 
