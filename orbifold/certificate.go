@@ -197,7 +197,12 @@ func (f Family) certifyDescent(ctx context.Context, c *claims) (err error) {
 }
 
 func (f Family) certifyContinuant(ctx context.Context, c *claims) error {
-	fraction, err := f.FractionContext(ctx, c.slope)
+	fraction, err := contfrac.FractionOf(1) // of an arc that crosses nothing
+	var word *contfrac.Word
+	if !c.slope.IsBase() {
+		w, wordErr := f.WordContext(ctx, c.slope)
+		fraction, err, word = fractionOf(w), wordErr, &w
+	}
 	if err != nil {
 		return err
 	}
@@ -210,14 +215,8 @@ func (f Family) certifyContinuant(ctx context.Context, c *claims) error {
 			return r.Uint64(), ctx.Err()
 		})
 	} else {
-		c.fraction, c.continuant = &fraction, Count{Method: Exact, value: fraction.Numerator()}
-		if !c.slope.IsBase() {
-			w, err := f.WordContext(ctx, c.slope)
-			if err != nil {
-				return err
-			}
-			c.word = &w
-		}
+		c.word, c.fraction = word, &fraction
+		c.continuant = Count{Method: Exact, value: fraction.Numerator()}
 	}
 	return c.agree(ctx, "continuant", c.continuant, err)
 }
